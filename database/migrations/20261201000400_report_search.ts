@@ -1,0 +1,126 @@
+import type { Knex } from 'knex';
+
+/**
+ * The one projection that search, facets, suggestions and watches read. It has a row per published
+ * report and tier: the clubs' row knows tells disclosed to clubs, the public row only public ones,
+ * so that neither words nor counts can tell a visitor what is held back.
+ */
+export async function up(knex: Knex): Promise<void> {
+  await knex.raw(`
+create table report_search (
+  report_id uuid not null references report (id),
+  tier text not null,
+  number text not null,
+  publication_id uuid not null references publication (id),
+  published_audience text not null,
+  club_id uuid not null,
+  reader_clubs uuid[] not null default '{}',
+  embargo_until timestamptz,
+  state text not null,
+  version integer not null,
+  coin_type_id uuid,
+  coin_type_slug text,
+  title text not null,
+  kind text not null,
+  metal text,
+  year integer,
+  mint_mark text,
+  confidence text not null,
+  channel text not null,
+  country text not null,
+  region text not null,
+  surfaced_month date not null,
+  tells text[] not null,
+  published_at timestamptz not null,
+  first_published_at timestamptz not null,
+  card jsonb not null,
+  words tsvector not null,
+  primary key (report_id, tier),
+  constraint report_search_tier_known check (tier in ('public', 'clubs'))
+);
+create index report_search_words_index on report_search using gin (words);
+create index report_search_order_index on report_search (tier, published_at desc, report_id desc);
+create index report_search_type_index on report_search
+  (tier, coin_type_slug, published_at desc, report_id desc);
+create index report_search_tells_index on report_search using gin (tells);
+create index report_search_number_index on report_search (number);
+
+-- The same rule as sees_as_published, said over the projection's own columns, and owned by the
+-- owner: the operators of full text and trigrams keep their indexes here, which row-level
+-- security would switch off.
+create view visible_report_search with (security_barrier = false) as
+  select s.* from report_search s
+   where s.tier = (case when (select is_system_actor())
+                          or cardinality((select actor_clubs())::uuid[]) > 0
+                          or (select actor_is_registrar())
+                        then 'clubs' else 'public' end)
+     and ((s.embargo_until is null or s.embargo_until <= now()) or (select is_system_actor()))
+     and (s.published_audience in ('public', 'clubs')
+          or s.club_id = any ((select actor_clubs())::uuid[])
+          or (s.published_audience = 'named_clubs'
+              and s.reader_clubs && (select actor_clubs())::uuid[])
+          or (select is_system_actor()) or (select actor_is_registrar()));
+
+-- Renewed by the application in the transaction that publishes, widens, corrects or retracts.
+create function renew_report_search(wanted_report uuid) returns void language plpgsql
+  security definer set search_path = public, pg_temp as $$
+begin
+  delete from report_search where report_id = wanted_report;
+  insert into report_search
+  select r.id, t.tier, r.number, p.id, p.audience, r.club_id, reader_clubs_of(r.id),
+    r.embargo_until, r.state, v.version, v.coin_type_id, ct.slug,
+    coalesce(v.piece ->> 'title', ct.name, 'Piece'),
+    coalesce(ct.kind, v.piece ->> 'kind', 'coin'), coalesce(ct.metal, v.piece ->> 'metal'),
+    (v.piece ->> 'year')::integer, v.piece ->> 'mintMark', p.confidence,
+    s.channel, s.country, s.region, s.surfaced_month,
+    coalesce(tells.ids, '{}'), lower(p.during),
+    (select min(lower(p2.during)) from publication p2 where p2.report_id = r.id),
+    jsonb_build_object('photos', coalesce(photos.list, '[]'::jsonb), 'tells',
+      coalesce(tells.named, '[]'::jsonb), 'methodId', v.method_id,
+      'pieceCount', v.piece_count),
+    setweight(to_tsvector('touchneedle', concat_ws(' ', v.piece ->> 'title', ct.name,
+      ct.issuer, v.piece ->> 'year', v.piece ->> 'mintMark',
+      v.piece ->> 'description')), 'A')
+    || setweight(to_tsvector('touchneedle', concat_ws(' ', tells.words, pm.name,
+      replace(s.channel, '_', ' '), s.region, ct.kind, replace(ct.metal, '_', ' '))), 'B')
+    || setweight(to_tsvector('touchneedle', case when t.tier = 'clubs'
+      then regexp_replace(v.account_html, '<[^>]*>', ' ', 'g') else '' end), 'D')
+  from report r
+  join publication p on p.report_id = r.id and upper_inf(p.during)
+  join report_version v on v.report_id = r.id and v.version = p.version
+  join surfacing s on s.report_id = v.report_id and s.version = v.version
+  left join coin_type ct on ct.id = v.coin_type_id
+  left join production_method pm on pm.id = v.method_id
+  cross join (values ('clubs'), ('public')) as t (tier)
+  left join lateral (
+    select array_agg(distinct rt.tell_id) as ids, string_agg(te.name || ' ' || te.seen, ' ') as words,
+      jsonb_agg(jsonb_build_object('id', te.id, 'name', te.name) order by rt.position) as named
+    from report_tell rt join tell te on te.id = rt.tell_id
+    where rt.report_id = v.report_id and rt.version = v.version
+      and (rt.disclosure = 'public' or (t.tier = 'clubs' and rt.disclosure = 'clubs'))
+      and (te.disclosure = 'public' or (t.tier = 'clubs' and te.disclosure = 'clubs'))
+  ) tells on true
+  left join lateral (
+    select jsonb_agg(jsonb_build_object('id', ph.id, 'side', rp.side, 'width', ph.width,
+        'height', ph.height, 'circle', rp.circle, 'uprightDegrees', rp.upright_degrees)
+        order by rp.position) as list
+    from report_photo rp join photo ph on ph.id = rp.photo_id
+    where rp.report_id = v.report_id and rp.version = v.version
+      and rp.side in ('obverse', 'reverse')
+  ) photos on true
+  where r.id = wanted_report and r.state = 'published'
+    and (t.tier = 'clubs' or p.audience = 'public');
+end $$;
+revoke execute on function renew_report_search(uuid) from public;
+grant execute on function renew_report_search(uuid) to touchneedle_app;
+grant select on visible_report_search to touchneedle_app;
+`);
+}
+
+export async function down(knex: Knex): Promise<void> {
+  await knex.raw(`
+drop view visible_report_search;
+drop function renew_report_search(uuid);
+drop table report_search;
+`);
+}
