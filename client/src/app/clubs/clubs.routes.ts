@@ -1,0 +1,4 @@
+import { Routes } from '@angular/router';
+
+export const clubRoutes: Routes = [];
+export const registryRoutes: Routes = [];
