@@ -115,6 +115,7 @@ create table account_link (
   kind text not null,
   token_hash bytea not null,
   email citext,
+  display_name text,
   person_id uuid references person (id),
   club_id uuid references club (id),
   roles text[] not null default '{}',
