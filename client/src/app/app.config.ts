@@ -26,7 +26,7 @@ import {
   problemInterceptor,
   signInInterceptor,
 } from './http/interceptors';
-import { PageTitle } from './shell/page-title';
+import { PageTitle } from './ui/page-title';
 
 export const appConfig: ApplicationConfig = {
   providers: [

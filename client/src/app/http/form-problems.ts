@@ -1,7 +1,8 @@
 import { AbstractControl } from '@angular/forms';
 import { ApiProblem, FieldProblem } from '#shared/api-problem';
 
-import { serverErrorKey } from '../ui/field-error';
+/** The key under which a field's problem from the server stands among a control's errors. */
+export const serverErrorKey = 'server';
 
 /**
  * Puts the server's field problems on the controls of the same path, where they stay until the

@@ -47,32 +47,36 @@ bank's counterfeit desk will take the note.`,
 /** Codes of single fields; a code not listed reads as "not accepted". */
 const fieldCatalogue: Readonly<Record<string, Words>> = {
   required: () => $localize`This is needed.`,
-  invalid_type: () => $localize`This is needed, or not in the form asked for.`,
-  invalid_value: () => $localize`Choose one of those offered.`,
-  invalid_format: ({ format }) =>
-    format === 'email'
-      ? $localize`This is no e-mail address.`
-      : $localize`This is not in the form asked for.`,
-  invalid_email: () => $localize`This is no e-mail address.`,
+  wrong_type: () => $localize`This is not in the form asked for.`,
+  not_one_of: () => $localize`Choose one of those offered.`,
   too_small: ({ minimum }) =>
-    minimum === undefined ? $localize`This is too short.` : $localize`${minimum}:minimum: at least.`,
-  too_big: ({ maximum }) =>
-    maximum === undefined ? $localize`This is too long.` : $localize`${maximum}:maximum: at most.`,
-  too_short: ({ minimum }) =>
     minimum === undefined
-      ? $localize`This is too short.`
+      ? $localize`This is too small.`
+      : $localize`${minimum}:minimum: at least.`,
+  too_big: ({ maximum }) =>
+    maximum === undefined
+      ? $localize`This is too large.`
+      : $localize`${maximum}:maximum: at most.`,
+  too_short: ({ minimum }) =>
+    minimum === undefined || Number(minimum) <= 1
+      ? $localize`This is needed.`
       : $localize`${minimum}:minimum: characters at least.`,
   too_long: ({ maximum }) =>
     maximum === undefined
       ? $localize`This is too long.`
       : $localize`${maximum}:maximum: characters at most.`,
+  not_an_address: () => $localize`This is no e-mail address.`,
+  not_a_time_zone: () => $localize`This time zone is not known.`,
+  not_a_slug: () => $localize`Small letters, digits and single hyphens only.`,
   password_too_short: () => $localize`Twelve characters at least.`,
   password_too_long: () =>
-    $localize`At most 72 bytes: shorten it, for the rest would not be read.`,
-  password_common: () => $localize`This password is among the first that anyone would try.`,
-  unknown_time_zone: () => $localize`This time zone is not known.`,
-  unknown_country: () => $localize`This country is not known.`,
-  in_future: () => $localize`This lies in the future.`,
+    $localize`At most 72 bytes (fewer letters where they carry accents): no more can be kept.`,
+  password_too_common: () =>
+    $localize`This is among the first that anyone would try. Four unrelated words do well.`,
+  only_when_publishing: () => $localize`This goes with a publication only.`,
+  confirmed_needs_piece: () => $localize`"Confirmed" needs the piece in hand.`,
+  confirmed_needs_test: () =>
+    $localize`"Confirmed" needs one objective test outside its limits.`,
 };
 
 /** The sentence for a problem, with the request's id where the server gives one. */

@@ -1,4 +1,11 @@
-import { ChangeDetectionStrategy, Component, LOCALE_ID, computed, inject, input } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  LOCALE_ID,
+  computed,
+  inject,
+  input,
+} from '@angular/core';
 
 import { Answer } from './answer-chip';
 import { deviationScale } from './deviation-scale';
@@ -53,8 +60,8 @@ export class DeviationBar {
     this.scale().ticks.map((tick) => ({ at: this.at(tick), label: this.figure(tick) })),
   );
   protected readonly words = computed(() => {
-    const limits = $localize`${this.quantity()}:quantity:: limits ${this.figure(this.low())}:low: to \
-${this.figure(this.high())}:high: ${this.unit()}:unit:`;
+    const limits = $localize`${this.quantity()}:quantity:: limits \
+${this.figure(this.low())}:low: to ${this.figure(this.high())}:high: ${this.unit()}:unit:`;
     const value = this.value();
     return value === null
       ? limits

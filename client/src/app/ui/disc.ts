@@ -1,5 +1,10 @@
 import { ChangeDetectionStrategy, Component, computed, inject, input } from '@angular/core';
-import { PlacedPhotoView, RenditionSize, photoAddress, renditionSizes } from '#shared/reports/photo';
+import {
+  PlacedPhotoView,
+  RenditionSize,
+  photoAddress,
+  renditionSizes,
+} from '#shared/reports/photo';
 
 import { Icon } from './icon';
 import { PhotoViewer } from './photo-viewer';

@@ -4,10 +4,8 @@ import { AbstractControl, ValidationErrors } from '@angular/forms';
 import { map, startWith, switchMap } from 'rxjs';
 import { FieldProblem } from '#shared/api-problem';
 
+import { serverErrorKey } from '../http/form-problems';
 import { fieldProblemWords } from '../http/problem-words';
-
-/** The key under which a field's problem from the server stands among a control's errors. */
-export const serverErrorKey = 'server';
 
 /**
  * The words for what is wrong with a control, whether a validator of the form or the server says
@@ -50,7 +48,7 @@ function problemOfError(key: string, detail: unknown): Pick<FieldProblem, 'code'
     case 'requiredtrue':
       return { code: 'required' };
     case 'email':
-      return { code: 'invalid_email' };
+      return { code: 'not_an_address' };
     case 'min':
       return { code: 'too_small', parameters: { minimum: numberIn(detail, 'min') } };
     case 'max':

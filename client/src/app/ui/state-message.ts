@@ -28,8 +28,10 @@ export class StateMessage {
   /** Given, a status that a retry cannot mend (403, 404) offers none. */
   readonly problem = input<Pick<ApiProblem, 'status'> | null>(null);
 
-  readonly retried = output<void>();
+  readonly retried = output();
 
   protected readonly shapeList = computed(() => Array.from({ length: this.shapes() }));
-  protected readonly offersRetry = computed(() => ![403, 404].includes(this.problem()?.status ?? 0));
+  protected readonly offersRetry = computed(
+    () => ![403, 404].includes(this.problem()?.status ?? 0),
+  );
 }
