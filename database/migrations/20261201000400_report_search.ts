@@ -50,16 +50,37 @@ create index report_search_number_index on report_search (number);
 -- security would switch off.
 create view visible_report_search with (security_barrier = false) as
   select s.* from report_search s
-   where s.tier = (case when (select is_system_actor())
-                          or cardinality((select actor_clubs())::uuid[]) > 0
-                          or (select actor_is_registrar())
-                        then 'clubs' else 'public' end)
+   where (s.tier = (case when cardinality((select actor_clubs())::uuid[]) > 0
+                           or (select actor_is_registrar())
+                         then 'clubs' else 'public' end)
+          or (select is_system_actor()))
      and ((s.embargo_until is null or s.embargo_until <= now()) or (select is_system_actor()))
      and (s.published_audience in ('public', 'clubs')
           or s.club_id = any ((select actor_clubs())::uuid[])
           or (s.published_audience = 'named_clubs'
               and s.reader_clubs && (select actor_clubs())::uuid[])
           or (select is_system_actor()) or (select actor_is_registrar()));
+
+-- The words of a search as a query: all of them, the last one also as a beginning. Search and the
+-- matching of watches both ask it, so that a saved search finds what the search found.
+create function search_query(wanted text) returns tsquery language sql stable parallel safe as $$
+  select case when q::text ~ '''$' and wanted !~ '["[:space:]]$' then (q::text || ':*')::tsquery
+              else q end
+    from (select websearch_to_tsquery('touchneedle', wanted) as q) asked
+$$;
+
+-- Which of these people may read this published report now; for the matching of watches, which
+-- runs for nobody. At sending time each is asked again, as the recipient.
+create function readers_of_report(wanted_report uuid, people uuid[]) returns setof uuid
+  language sql stable security definer set search_path = public, pg_temp as $$
+  select p.id from person p, report r
+   where is_system_actor() and p.id = any (people) and p.closed_at is null
+     and r.id = wanted_report and r.state = 'published'
+     and (p.is_registrar or sees_as_published(r.published_audience, r.club_id, r.id,
+       r.embargo_until, array(select m.club_id from membership m
+         join club c on c.id = m.club_id and c.closed_at is null
+        where m.person_id = p.id and m.during @> now())))
+$$;
 
 -- Renewed by the application in the transaction that publishes, widens, corrects or retracts.
 create function renew_report_search(wanted_report uuid) returns void language plpgsql
@@ -120,7 +141,7 @@ grant select on visible_report_search to touchneedle_app;
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
 drop view visible_report_search;
-drop function renew_report_search(uuid);
+drop function renew_report_search(uuid), readers_of_report(uuid, uuid[]), search_query(text);
 drop table report_search;
 `);
 }
