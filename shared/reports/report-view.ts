@@ -53,6 +53,14 @@ export interface ReportSearchAnswer {
   readonly numberMistyped: boolean;
 }
 
+/** `GET /api/reports/suggestions?text=`: words of the catalogue only, never of reports. */
+export interface SearchSuggestion {
+  /** `coin_type` and `tell`: `value` is the slug or id for that facet; `word`: a word to search. */
+  readonly kind: 'coin_type' | 'tell' | 'word';
+  readonly value: string;
+  readonly label: string;
+}
+
 export const facetNames = ['coinType', 'metal', 'kind', 'tell', 'channel', 'country',
   'confidence'] as const;
 export type FacetName = (typeof facetNames)[number];
