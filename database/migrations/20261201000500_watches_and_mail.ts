@@ -97,12 +97,46 @@ alter table mail_item enable row level security;
 create policy mail_item_system on mail_item to touchneedle_app
   using ((select is_system_actor())) with check ((select is_system_actor()));
 
+-- Mails the reporter of a report, whose address the moderator who decides may not read.
+create function reserve_notice_mail(wanted_cause text, reporter uuid, about_report uuid,
+  mail_parameters jsonb) returns void language sql security definer
+  set search_path = public, pg_temp as $$
+  insert into mail (cause, kind, person_id, address, parameters)
+  select wanted_cause, 'notice', p.id, p.email, mail_parameters
+    from person p join report r on r.author_id = p.id
+   where p.id = reporter and r.id = about_report and p.closed_at is null
+     and (sees_evidence(r.id) or is_system_actor())
+  on conflict (cause) do nothing
+$$;
+revoke execute on function reserve_notice_mail(text, uuid, uuid, jsonb) from public;
+grant execute on function reserve_notice_mail(text, uuid, uuid, jsonb) to touchneedle_app;
+
+-- A new mail in the place of one that the registrar settled as lost: same words, new cause.
+create function send_mail_anew(lost uuid) returns void language plpgsql security definer
+  set search_path = public, pg_temp as $$
+declare anew uuid;
+begin
+  if not (actor_is_registrar() or is_system_actor()) then
+    raise exception 'only the registrar sends a lost mail anew' using errcode = '42501';
+  end if;
+  insert into mail (cause, kind, person_id, address, parameters)
+  select m.cause || ':anew', m.kind, m.person_id, m.address, m.parameters
+    from mail m where m.id = lost and m.state = 'settled_lost'
+  on conflict (cause) do nothing returning id into anew;
+  insert into mail_item (mail_id, report_id, publication_id, position, reasons)
+  select anew, i.report_id, i.publication_id, i.position, i.reasons
+    from mail_item i where i.mail_id = lost and anew is not null;
+end $$;
+revoke execute on function send_mail_anew(uuid) from public;
+grant execute on function send_mail_anew(uuid) to touchneedle_app;
+
 grant select, insert, update on watch, alert, mail, mail_item to touchneedle_app;
 `);
 }
 
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
+drop function reserve_notice_mail(text, uuid, uuid, jsonb), send_mail_anew(uuid);
 drop table mail_item, alert, mail, watch cascade;
 `);
 }

@@ -48,8 +48,7 @@ export function openDatabase(
   return {
     sessionPool,
     asActor: (actor, work) => pool.transaction(async (trx) => {
-      const setting = actor.kind === 'person' ? actor.id : actor.kind === 'system' ? 'system' : '';
-      await trx.raw(`select set_config('touchneedle.actor', ?, true)`, [setting]);
+      await continueAs(trx, actor);
       return work(trx);
     }),
     close: async () => {
@@ -57,4 +56,13 @@ export function openDatabase(
       await sessionPool.end();
     },
   };
+}
+
+/**
+ * Goes on with an open transaction as someone else: for the mail sender, which reads as the
+ * recipient in the transaction that claims the mail.
+ */
+export async function continueAs(trx: Transaction, actor: Actor): Promise<void> {
+  const setting = actor.kind === 'person' ? actor.id : actor.kind === 'system' ? 'system' : '';
+  await trx.raw(`select set_config('touchneedle.actor', ?, true)`, [setting]);
 }

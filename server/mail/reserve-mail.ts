@@ -15,5 +15,4 @@ export async function reserveMail(trx: Transaction, mail: MailReservation): Prom
     `insert into mail (cause, kind, person_id, address, parameters) values (?, ?, ?, ?, ?)
      on conflict (cause) do nothing`,
     [mail.cause, mail.kind, mail.personId, mail.address, JSON.stringify(mail.parameters)]);
-  await trx.raw(`notify touchneedle_mail`);
 }

@@ -21,7 +21,7 @@ const conditionOfFlag: Readonly<Record<string, string>> = {
  */
 export async function listQueue(trx: Transaction, query: QueueQuery): Promise<QueueAnswer> {
   const conditions: string[] = [];
-  const values: unknown[] = [];
+  const values: string[] = [];
   if (query.flag) conditions.push(conditionOfFlag[query.flag] ?? 'true');
   if (query.club) { conditions.push('c.slug = ?'); values.push(query.club); }
   if (query.coinType) { conditions.push('ct.slug = ?'); values.push(query.coinType); }
