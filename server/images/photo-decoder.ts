@@ -61,7 +61,7 @@ export function createPhotoDecoder(limits: {
     }, limits.milliseconds);
     const onMessage = (reply: DecodeReply): void => {
       finish();
-      idle.set(child, setTimeout(() => child.kill(), idleMilliseconds).unref());
+      rest(child);
       if (reply.ok) done(reply.photo);
       else failed(new ProblemError(statusOf[reply.refusal], reply.refusal));
       startNext();
@@ -77,7 +77,16 @@ export function createPhotoDecoder(limits: {
       busy -= 1;
     };
     child.on('message', onMessage).on('exit', onExit);
+    child.ref();
+    child.channel?.ref();
     child.send(request);
+  }
+
+  /** An idle process, like its channel, does not keep the server from ending. */
+  function rest(child: ChildProcess): void {
+    idle.set(child, setTimeout(() => child.kill(), idleMilliseconds).unref());
+    child.unref();
+    child.channel?.unref();
   }
 
   function takeIdle(): ChildProcess | undefined {
@@ -104,9 +113,6 @@ export function createPhotoDecoder(limits: {
       clearTimeout(idle.get(child));
       idle.delete(child);
     });
-    // Neither the process nor its channel keeps the server from ending.
-    child.unref();
-    child.channel?.unref();
     return child;
   }
 }
