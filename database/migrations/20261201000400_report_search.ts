@@ -20,6 +20,7 @@ create table report_search (
   version integer not null,
   coin_type_id uuid,
   coin_type_slug text,
+  coin_type_name text,
   title text not null,
   kind text not null,
   metal text,
@@ -89,7 +90,7 @@ begin
   delete from report_search where report_id = wanted_report;
   insert into report_search
   select r.id, t.tier, r.number, p.id, p.audience, r.club_id, reader_clubs_of(r.id),
-    r.embargo_until, r.state, v.version, v.coin_type_id, ct.slug,
+    r.embargo_until, r.state, v.version, v.coin_type_id, ct.slug, ct.name,
     coalesce(v.piece ->> 'title', ct.name, 'Piece'),
     coalesce(ct.kind, v.piece ->> 'kind', 'coin'), coalesce(ct.metal, v.piece ->> 'metal'),
     (v.piece ->> 'year')::integer, v.piece ->> 'mintMark', p.confidence,
