@@ -68,6 +68,7 @@ const fieldCatalogue: Readonly<Record<string, Words>> = {
   not_an_address: () => $localize`This is no e-mail address.`,
   not_a_time_zone: () => $localize`This time zone is not known.`,
   not_a_slug: () => $localize`Small letters, digits and single hyphens only.`,
+  wrong_password: () => $localize`This is not your present password.`,
   password_too_short: () => $localize`Twelve characters at least.`,
   password_too_long: () =>
     $localize`At most 72 bytes (fewer letters where they carry accents): no more can be kept.`,
