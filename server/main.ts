@@ -9,9 +9,8 @@ const config = readConfig(process.env);
 const logger = pino({ level: config.logLevel, name: 'server' });
 const database = openDatabase(config.databaseUrl, config.databasePoolSize,
   (error) => logger.warn({ err: error }, 'idle database connection lost'));
-const app = createApp({
-  config, database, logger, routes: composeRoutes({ config, database, logger }),
-});
+const { routes, stop: stopRoutes } = await composeRoutes({ config, database, logger });
+const app = createApp({ config, database, logger, routes });
 const server = createServer(app);
 server.listen(config.port, config.host, () => {
   logger.info({ address: config.baseUrl.origin }, 'listening');
@@ -22,7 +21,8 @@ let stopping = false;
 function stop(): void {
   if (stopping) return;
   stopping = true;
-  server.close(() => void database.close().then(() => process.exit(0)));
+  server.close(() => void stopRoutes().then(() => database.close())
+    .then(() => process.exit(0)));
   server.closeIdleConnections();
   setTimeout(() => server.closeAllConnections(), 3_000).unref();
 }
