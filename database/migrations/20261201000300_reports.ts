@@ -506,6 +506,8 @@ create policy report_reader_club_seen on report_reader_club for select to touchn
   sees_evidence(report_id) or club_id = any ((select actor_clubs())::uuid[]));
 create policy report_reader_club_added on report_reader_club for insert to touchneedle_app
   with check (sees_evidence(report_id));
+create policy report_reader_club_removed on report_reader_club for delete to touchneedle_app
+  using (sees_evidence(report_id));
 
 alter table photo enable row level security;
 create policy photo_seen on photo for select to touchneedle_app using (
@@ -573,11 +575,52 @@ create function reporter_name(wanted_report uuid) returns text language sql stab
    where r.id = wanted_report and (r.author_named or sees_evidence(wanted_report))
 $$;
 
+-- True where tells or pins of this version exist that the actor may not see; not which, nor how
+-- many.
+create function holds_back_tells(wanted_report uuid, wanted_version integer) returns boolean
+  language sql stable security definer set search_path = public, pg_temp as $$
+  select exists (select from report_tell rt join tell t on t.id = rt.tell_id
+      where rt.report_id = wanted_report and rt.version = wanted_version
+        and not (sees_disclosure(rt.disclosure, rt.report_id)
+          and (t.disclosure = 'public'
+            or (t.disclosure = 'clubs' and cardinality(actor_clubs()) > 0)
+            or cardinality(actor_clubs_as('moderator')) > 0)))
+    or exists (select from pin p
+      where p.report_id = wanted_report and p.version = wanted_version
+        and not sees_disclosure(p.disclosure, p.report_id))
+$$;
+
+-- Why a published report was retracted: shown to whoever may see the report.
+create function retraction_reason(wanted_report uuid) returns text language sql stable
+  security definer set search_path = public, pg_temp as $$
+  select d.reason from decision d join report r on r.id = d.report_id
+   where d.report_id = wanted_report and d.kind = 'retract' and d.undone_at is null
+     and r.state = 'retracted'
+     and (sees_as_published(r.published_audience, r.club_id, r.id, r.embargo_until, actor_clubs())
+          or sees_evidence(wanted_report))
+   order by d.made_at desc limit 1
+$$;
+
+-- For the worker: photos that no report has and no draft has had for a while, and removed ones
+-- whose objects may still lie in the store. Drafts are hidden from the worker itself.
+create function unused_photos(created_before timestamptz, at_most integer) returns setof uuid
+  language sql stable security definer set search_path = public, pg_temp as $$
+  select p.id from photo p
+   where is_system_actor()
+     and ((p.removed_at is not null
+           and exists (select from photo_rendition pr where pr.photo_id = p.id))
+       or (p.removed_at is null and p.created_at < created_before
+         and not exists (select from report_photo rp where rp.photo_id = p.id)
+         and not exists (select from draft d where d.author_id = p.owner_id
+           and d.content -> 'photos' @> jsonb_build_array(jsonb_build_object('photoId', p.id)))))
+   order by p.created_at, p.id limit at_most
+$$;
+
 grant select, insert, update on report, photo, decision, publication, notice to touchneedle_app;
 grant select, insert on report_version, component, report_photo, report_tell, pin, measurement,
   surfacing, surfacing_detail, surfacing_venue, report_reader_club, conflict_of_interest,
   registry_event to touchneedle_app;
-grant select, insert, delete on photo_rendition to touchneedle_app;
+grant select, insert, delete on photo_rendition, report_reader_club to touchneedle_app;
 grant select, insert, update, delete on draft, review_lease to touchneedle_app;
 grant select, insert, update on report_sequence to touchneedle_app;
 grant usage on sequence review_lease_token to touchneedle_app;
@@ -593,6 +636,8 @@ drop table notice, registry_event, publication, decision, conflict_of_interest, 
   component, report_version, report_reader_club, report, report_sequence, draft,
   photo_rendition, photo cascade;
 drop sequence review_lease_token;
+drop function holds_back_tells(uuid, integer), retraction_reason(uuid),
+  unused_photos(timestamptz, integer);
 drop function publication_needs_two_voices(), decision_not_on_own_report(), reporter_name(uuid),
   sees_disclosure(text, uuid), sees_version(uuid, integer), in_reporters_club(uuid),
   sees_evidence(uuid), reviews_report(text, uuid, uuid, text, uuid[]),

@@ -70,6 +70,18 @@ create function search_query(wanted text) returns tsquery language sql stable pa
     from (select websearch_to_tsquery('touchneedle', wanted) as q) asked
 $$;
 
+-- Whose totals the actor shares, and the last change of what is published that every transaction
+-- sees: totals kept in memory hold while both are the same.
+create function search_audience() returns table (audience text, changed_at text)
+  language sql stable security definer set search_path = public, pg_temp as $$
+  select case when is_system_actor() or actor_is_registrar() then 'all'
+           else array_to_string(actor_clubs(), ' ') end,
+    coalesce((select e.xid::text || '/' || e.id from registry_event e
+       where e.xid < pg_snapshot_xmin(pg_current_snapshot())
+         and e.kind not in ('report_filed', 'report_changed', 'report_withdrawn')
+       order by e.xid desc, e.id desc limit 1), '')
+$$;
+
 -- Which of these people may read this published report now; for the matching of watches, which
 -- runs for nobody. At sending time each is asked again, as the recipient.
 create function readers_of_report(wanted_report uuid, people uuid[]) returns setof uuid
@@ -142,7 +154,7 @@ grant select on visible_report_search to touchneedle_app;
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
 drop view visible_report_search;
-drop function renew_report_search(uuid), readers_of_report(uuid, uuid[]), search_query(text);
+drop function search_audience(), renew_report_search(uuid), readers_of_report(uuid, uuid[]), search_query(text);
 drop table report_search;
 `);
 }

@@ -1,7 +1,7 @@
 import { createHash } from 'node:crypto';
 import { readFile, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
-import sharp from 'sharp';
+import sharp, { type OutputInfo, type Sharp } from 'sharp';
 import { renditionSizes, type BlurArea, type RenditionSize } from '#shared/reports/photo';
 import { masterSide, maximumPixels, type DecodedPhoto, type DecodeRefusal, type DecodeReply,
   type DecodeRequest, type RenditionFile, type RenditionFormat } from './decoder-messages';
@@ -31,7 +31,7 @@ class Refused extends Error {
 
 interface Raster {
   readonly data: Buffer;
-  readonly info: sharp.OutputInfo;
+  readonly info: OutputInfo;
 }
 
 process.on('message', (request: DecodeRequest) => {
@@ -142,6 +142,6 @@ async function withBlurred(raster: Raster, area: BlurArea): Promise<Raster> {
     .toBuffer({ resolveWithObject: true });
 }
 
-function fromRaster({ data, info }: Raster): sharp.Sharp {
+function fromRaster({ data, info }: Raster): Sharp {
   return sharp(data, { raw: { width: info.width, height: info.height, channels: info.channels } });
 }
