@@ -16,6 +16,7 @@ const schema = z.object({
   MAIL_FROM: z.string().default('Touchneedle <registry@touchneedle.example>'),
   PHOTO_DIRECTORY: z.string().min(1),
   CLIENT_DIRECTORY: z.string().default('dist/client'),
+  RATE_LIMITS: z.enum(['on', 'off']).default('on'),
   TRUST_PROXY: z.coerce.number().int().min(0).max(5).default(0),
   LOG_LEVEL: z.enum(['silent', 'error', 'warn', 'info', 'debug']).default('info'),
 });
@@ -36,6 +37,8 @@ export interface Config {
   readonly mailFrom: string;
   readonly photoDirectory: string;
   readonly clientDirectory: string;
+  /** Off only behind a proxy that limits, and in tests that are not about them. */
+  readonly rateLimits: boolean;
   readonly trustProxyHops: number;
   readonly logLevel: 'silent' | 'error' | 'warn' | 'info' | 'debug';
 }
@@ -62,6 +65,7 @@ export function readConfig(environment: Readonly<Record<string, string | undefin
     mailFrom: values.MAIL_FROM,
     photoDirectory: values.PHOTO_DIRECTORY,
     clientDirectory: values.CLIENT_DIRECTORY,
+    rateLimits: values.RATE_LIMITS === 'on',
     trustProxyHops: values.TRUST_PROXY,
     logLevel: values.LOG_LEVEL,
   };

@@ -89,13 +89,27 @@ create policy alert_written on alert to touchneedle_app
 alter table mail enable row level security;
 create policy mail_seen on mail for select to touchneedle_app using (
   (select is_system_actor()) or person_id = (select current_actor())
-  or (select actor_is_registrar()));
-create policy mail_reserved on mail for insert to touchneedle_app with check (true);
+  or (select actor_is_registrar())
+  or (kind = 'invitation'
+    and (parameters ->> 'clubId')::uuid = any ((select actor_clubs_as('secretary'))::uuid[])));
+create policy mail_reserved on mail for insert to touchneedle_app
+  with check ((select is_system_actor()));
 create policy mail_changed on mail for update to touchneedle_app
   using ((select is_system_actor()) or (select actor_is_registrar())) with check (true);
 alter table mail_item enable row level security;
 create policy mail_item_system on mail_item to touchneedle_app
   using ((select is_system_actor())) with check ((select is_system_actor()));
+
+-- Whoever causes a mail reserves it, though they may not read the ledger.
+create function reserve_mail(wanted_cause text, mail_kind text, recipient uuid, to_address text,
+  mail_parameters jsonb) returns void language sql security definer
+  set search_path = public, pg_temp as $$
+  insert into mail (cause, kind, person_id, address, parameters)
+  values (wanted_cause, mail_kind, recipient, to_address, mail_parameters)
+  on conflict (cause) do nothing
+$$;
+revoke execute on function reserve_mail(text, text, uuid, text, jsonb) from public;
+grant execute on function reserve_mail(text, text, uuid, text, jsonb) to touchneedle_app;
 
 -- Mails the reporter of a report, whose address the moderator who decides may not read.
 create function reserve_notice_mail(wanted_cause text, reporter uuid, about_report uuid,
@@ -136,7 +150,8 @@ grant select, insert, update on watch, alert, mail, mail_item to touchneedle_app
 
 export async function down(knex: Knex): Promise<void> {
   await knex.raw(`
-drop function reserve_notice_mail(text, uuid, uuid, jsonb), send_mail_anew(uuid);
+drop function reserve_mail(text, text, uuid, text, jsonb),
+  reserve_notice_mail(text, uuid, uuid, jsonb), send_mail_anew(uuid);
 drop table mail_item, alert, mail, watch cascade;
 `);
 }

@@ -12,8 +12,7 @@ const perMinute: Readonly<Record<RateLimit, number>> = {
 
 /**
  * Limits kept in memory of the one server process: they guard against hammering, and are not part
- * of any guarantee. Off in tests, whose every request comes from one address, except where a test
- * asks for them.
+ * of any guarantee.
  */
 export function rateLimits(config: Config): Readonly<Record<RateLimit, RequestHandler>> {
   const make = (kind: RateLimit): RequestHandler => rateLimit({
@@ -23,7 +22,7 @@ export function rateLimits(config: Config): Readonly<Record<RateLimit, RequestHa
     legacyHeaders: false,
     identifier: kind,
     keyGenerator: (request) => callerOf(request)?.id ?? ipKeyGenerator(request.ip ?? ''),
-    skip: () => config.environment === 'test' && kind !== 'credentials',
+    skip: () => !config.rateLimits,
     handler: () => {
       throw new ProblemError(429, 'too_many_requests', { retryAfterSeconds: 60 });
     },

@@ -11,8 +11,6 @@ export interface MailReservation {
 
 /** Reserves a mail in the ledger, in the transaction of what causes it; the worker sends it. */
 export async function reserveMail(trx: Transaction, mail: MailReservation): Promise<void> {
-  await trx.raw(
-    `insert into mail (cause, kind, person_id, address, parameters) values (?, ?, ?, ?, ?)
-     on conflict (cause) do nothing`,
+  await trx.raw('select reserve_mail(?, ?, ?, ?, ?)',
     [mail.cause, mail.kind, mail.personId, mail.address, JSON.stringify(mail.parameters)]);
 }
