@@ -55,6 +55,11 @@ export function newPasswordRules(control: AbstractControl): ValidationErrors | n
       <mat-error><tn-field-error [control]="control()" /></mat-error>
     </mat-form-field>
   `,
+  styles: `
+    button tn-icon {
+      display: flex;
+    }
+  `,
 })
 export class PasswordField {
   readonly control = input.required<FormControl<string>>();

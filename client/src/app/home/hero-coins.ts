@@ -82,7 +82,7 @@ import { Mark } from '../ui/mark';
     }
     @media (width < 860px) {
       :host {
-        max-width: 330px;
+        max-width: 270px;
       }
     }
   `,

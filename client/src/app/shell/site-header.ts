@@ -39,7 +39,6 @@ export class SiteHeader {
   protected readonly person = this.session.person;
   protected readonly isKnown = this.session.isKnown;
   protected readonly isModerator = computed(() => this.session.hasRole('moderator'));
-  protected readonly isRegistrar = this.session.isRegistrar;
   protected readonly accountName = computed(() => {
     const clubs = this.session.clubs();
     return clubs.length === 1 && clubs[0] ? clubs[0].name : (this.person()?.displayName ?? '');

@@ -25,13 +25,16 @@ export interface PlacedPin {
 export class PinLayer {
   readonly pins = input.required<readonly PlacedPin[]>();
   readonly chosen = input<string | null>(null);
+  /** Marks every pin that bears the number: all pins of one tell. */
+  readonly chosenNumber = input<number | null>(null);
 
   readonly pinChosen = output<string>();
 
   protected readonly marks = computed(() =>
     this.pins().map((pin) => {
       const spot = spotOf(pin.place);
-      return { ...pin, ...spot, words: pinWords(pin), leftward: spot.x > 82 };
+      const isChosen = this.chosen() === pin.id || this.chosenNumber() === pin.number;
+      return { ...pin, ...spot, isChosen, words: pinWords(pin), leftward: spot.x > 82 };
     }),
   );
 
