@@ -1,5 +1,12 @@
 import { NgTemplateOutlet } from '@angular/common';
-import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  ElementRef,
+  computed,
+  inject,
+  signal,
+} from '@angular/core';
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { NavigationStart, Router, RouterLink, RouterLinkActive } from '@angular/router';
@@ -35,6 +42,7 @@ import { ThemePicker } from './theme-picker';
 export class SiteHeader {
   private readonly session = inject(SessionStore);
   private readonly router = inject(Router);
+  private readonly host = inject<ElementRef<HTMLElement>>(ElementRef).nativeElement;
 
   protected readonly person = this.session.person;
   protected readonly isKnown = this.session.isKnown;
@@ -84,7 +92,7 @@ export class SiteHeader {
   }
 
   protected closeOnOutsideClick(event: Event): void {
-    if (!(event.target instanceof Element) || event.target.closest('tn-site-header')) return;
-    this.closeAll();
+    const inside = event.target instanceof Node && this.host.contains(event.target);
+    if (!inside) this.closeAll();
   }
 }

@@ -7,8 +7,8 @@ export interface DeviationScale {
 }
 
 /**
- * A span that holds every given figure with a margin of an eighth on both sides, with four to
- * seven ticks at 1, 2 or 5 times a power of ten (common practice).
+ * A span that holds every given figure with a margin of an eighth on both sides, with three to
+ * eight ticks at 1, 2 or 5 times a power of ten (common practice).
  */
 export function deviationScale(figures: readonly number[]): DeviationScale {
   const low = Math.min(...figures);
@@ -17,7 +17,7 @@ export function deviationScale(figures: readonly number[]): DeviationScale {
   const width = high - low || Math.abs(high) * 0.02 || 1;
   const from = low - width / 8;
   const to = high + width / 8;
-  const step = niceStep((to - from) / 5);
+  const step = niceStep((to - from) / 3);
   const decimals = Math.max(0, -Math.floor(Math.log10(step) + 1e-9));
   const ticks: number[] = [];
   for (let index = Math.ceil(from / step); index * step <= to; index += 1) {
@@ -26,8 +26,9 @@ export function deviationScale(figures: readonly number[]): DeviationScale {
   return { from, to, ticks, decimals };
 }
 
-function niceStep(rough: number): number {
-  const power = 10 ** Math.floor(Math.log10(rough));
-  const factor = [1, 2, 5].find((candidate) => candidate * power >= rough) ?? 10;
+/** The longest step of 1, 2 or 5 times a power of ten that is no longer than `longest`. */
+function niceStep(longest: number): number {
+  const power = 10 ** Math.floor(Math.log10(longest));
+  const factor = [5, 2].find((candidate) => candidate * power <= longest) ?? 1;
   return factor * power;
 }

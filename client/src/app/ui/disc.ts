@@ -48,7 +48,7 @@ export class Disc {
   });
   protected readonly fallback = computed(() => photoAddress(this.photo().id, 'medium', 'jpeg'));
   protected readonly text = computed(
-    () => this.alt() || $localize`Counterfeit piece, ${sideWords(this.photo().side)}:side:`,
+    () => this.alt() || $localize`${sideWords(this.photo().side)}:side: of the reported piece`,
   );
   protected readonly frame = computed(() => discFrame(this.photo()));
   protected readonly fetchedWidth = computed(

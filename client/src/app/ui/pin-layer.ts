@@ -25,15 +25,13 @@ export interface PlacedPin {
 export class PinLayer {
   readonly pins = input.required<readonly PlacedPin[]>();
   readonly chosen = input<string | null>(null);
-  /** Marks every pin that bears the number: all pins of one tell. */
-  readonly chosenNumber = input<number | null>(null);
 
   readonly pinChosen = output<string>();
 
   protected readonly marks = computed(() =>
     this.pins().map((pin) => {
       const spot = spotOf(pin.place);
-      const isChosen = this.chosen() === pin.id || this.chosenNumber() === pin.number;
+      const isChosen = this.chosen() === pin.id;
       return { ...pin, ...spot, isChosen, words: pinWords(pin), leftward: spot.x > 82 };
     }),
   );

@@ -8,7 +8,7 @@ import { ChangeDetectionStrategy, Component, input } from '@angular/core';
   selector: 'tn-report-number',
   changeDetection: ChangeDetectionStrategy.OnPush,
   host: { '[class.stacked]': 'stacked()' },
-  template: `<span class="words" i18n>Counterfeit report</span> <b>{{ number() }}</b>`,
+  template: `<span class="words" i18n>Counterfeit report</span>&ngsp;<b>{{ number() }}</b>`,
   styles: `
     :host {
       display: inline-flex;
