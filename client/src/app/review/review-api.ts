@@ -32,6 +32,12 @@ export class ReviewApi {
     return this.http.get<QueueAnswer>('/api/review/queue', { params: { ...filter } });
   }
 
+  clubs(): Observable<readonly ClubSummary[]> {
+    return this.http
+      .get<{ items: readonly ClubSummary[] }>('/api/clubs')
+      .pipe(map(({ items }) => items));
+  }
+
   review(number: string): Observable<TimedReview> {
     return this.http
       .get<ReviewView>(this.address(number), { observe: 'response' })

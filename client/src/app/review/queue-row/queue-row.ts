@@ -1,5 +1,5 @@
 import { DOCUMENT } from '@angular/common';
-import { ChangeDetectionStrategy, Component, ElementRef, computed, inject, input,
+import { ChangeDetectionStrategy, Component, ElementRef, computed, inject, input, output,
   viewChild } from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { QueueItem } from '#shared/review/review';
@@ -23,6 +23,9 @@ export class QueueRow {
   readonly item = input.required<QueueItem>();
   readonly isOpen = input(false);
 
+  /** Asks for the next or previous row. */
+  readonly moved = output<1 | -1>();
+
   private readonly link = viewChild.required<ElementRef<HTMLAnchorElement>>('link');
 
   protected readonly photo = computed(() => this.item().photos[0]);
@@ -36,6 +39,12 @@ export class QueueRow {
 
   focus(): void {
     this.link().nativeElement.focus();
+  }
+
+  /** Arrows move within the list only: elsewhere they scroll. */
+  protected moveByArrow(event: Event, step: 1 | -1): void {
+    event.preventDefault();
+    this.moved.emit(step);
   }
 
   hasFocus(): boolean {

@@ -1,6 +1,6 @@
 import { LiveAnnouncer } from '@angular/cdk/a11y';
-import { ChangeDetectionStrategy, Component, DestroyRef, ElementRef, computed, effect, inject, input,
-  signal, viewChild, viewChildren } from '@angular/core';
+import { ChangeDetectionStrategy, Component, DestroyRef, ElementRef, computed, effect, inject,
+  input, signal, viewChild, viewChildren } from '@angular/core';
 import { toSignal } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { NavigationEnd, Router, RouterLink, RouterOutlet } from '@angular/router';
@@ -90,9 +90,9 @@ export class ReviewDesk {
 
   protected toggleHelp(): void {
     this.helpOpen.update((open) => !open);
-    void this.announcer.announce(
-      this.helpOpen() ? $localize`Help on the keys is open.` : $localize`Help on the keys is closed.`,
-    );
+    void this.announcer.announce(this.helpOpen()
+      ? $localize`Help on the keys is open.`
+      : $localize`Help on the keys is closed.`);
     if (!this.helpOpen()) this.help().nativeElement.focus();
   }
 
@@ -103,17 +103,11 @@ export class ReviewDesk {
     });
   }
 
-  /** Arrows move within the list only: elsewhere they scroll. */
-  protected moveByArrow(event: Event, step: 1 | -1): void {
-    event.preventDefault();
-    this.moveFocus(step);
-  }
-
   protected reloadQueue(): void {
     this.store.reload();
   }
 
-  private moveFocus(step: 1 | -1): void {
+  protected moveFocus(step: 1 | -1): void {
     const rows = this.rows();
     const focused = rows.findIndex((row) => row.hasFocus());
     const open = rows.findIndex((row) => row.item().number === this.openNumber());
