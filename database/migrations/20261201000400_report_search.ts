@@ -40,9 +40,9 @@ create table report_search (
   constraint report_search_tier_known check (tier in ('public', 'clubs'))
 );
 create index report_search_words_index on report_search using gin (words);
-create index report_search_order_index on report_search (tier, published_at desc, report_id desc);
+create index report_search_order_index on report_search (published_at desc, report_id desc);
 create index report_search_type_index on report_search
-  (tier, coin_type_slug, published_at desc, report_id desc);
+  (coin_type_slug, published_at desc, report_id desc);
 create index report_search_tells_index on report_search using gin (tells);
 create index report_search_number_index on report_search (number);
 

@@ -22,12 +22,13 @@ export async function findReportView(
   const { rows: [row] } = await trx.raw(
     `${viewStatement(version)}${wanted === 'newest' ? '' : ' and p.id is not null'}`,
     typeof wanted === 'number' ? [wanted, number] : [number]);
-  return row && toView(row);
+  return row && toView(row, wanted);
 }
 
 const viewStatement = (version: string): string => `
 select r.number, r.state, r.row_version, r.audience as asked_audience, r.published_audience,
-  r.embargo_until, r.filed_at, r.author_id = current_actor() as mine, v.version, v.piece,
+  r.embargo_until, r.filed_at, r.author_named, r.author_id = current_actor() as mine, v.version,
+  v.piece,
   v.piece_count, v.condition, v.whereabouts, v.account_html, seen.evidence,
   reporter_name(r.id) as reporter_name, holds_back_tells(r.id, v.version) as held_back,
   m.id as method_id, m.name as method_name, ct.slug as type_slug, ct.name as type_name,
@@ -104,6 +105,7 @@ interface ViewRow {
   readonly number: string; readonly state: ReportState; readonly row_version: number;
   readonly asked_audience: Audience; readonly published_audience: Audience | null;
   readonly embargo_until: Date | null; readonly filed_at: Date; readonly mine: boolean;
+  readonly author_named: boolean;
   readonly version: number; readonly piece: PieceRow; readonly piece_count: number;
   readonly condition: Condition; readonly whereabouts: Whereabouts;
   readonly account_html: string; readonly evidence: boolean;
@@ -128,8 +130,10 @@ interface ViewRow {
   readonly history: readonly PublicationView[] | null;
 }
 
-function toView(row: ViewRow): ReportView {
+function toView(row: ViewRow, wanted: WantedVersion): ReportView {
   const { piece, evidence } = row;
+  // A reviewer's look at private evidence is put on record, which the published page does not do.
+  const isReadersPage = wanted !== 'newest' && !row.mine;
   const history = (row.history ?? []).map((each) => ({
     ...each, from: toInstant(each.from), to: each.to && toInstant(each.to),
   }));
@@ -153,13 +157,13 @@ function toView(row: ViewRow): ReportView {
     tells: (row.tells ?? []).map((tell) => toTell(tell, row.pins ?? [])),
     someTellsHeldBack: row.held_back,
     measurements: row.measurements ?? [],
-    surfacing: toSurfacing(row),
+    surfacing: toSurfacing(row, isReadersPage ? null : row.venue),
     accountHtml: row.account_html,
     askedAudience: evidence ? row.asked_audience : null,
     audience: row.published_audience,
     embargoUntil: evidence ? row.embargo_until?.toISOString() ?? null : null,
     club: row.club_slug === null ? null : { slug: row.club_slug, name: row.club_name },
-    reporterName: row.reporter_name,
+    reporterName: isReadersPage && !row.author_named ? null : row.reporter_name,
     // Filing dates follow meeting nights, so readers are not told them.
     filedAt: evidence ? row.filed_at.toISOString() : null,
     confidence: row.confidence,
@@ -192,7 +196,7 @@ export function toPlace(pin: Omit<PinRow, 'tell' | 'layer'>): PinPlace {
     : { side: pin.side, clockHours: pin.clockHours ?? 0, radiusFraction: pin.radiusFraction ?? 0 };
 }
 
-function toSurfacing(row: ViewRow): ReportView['surfacing'] {
+function toSurfacing(row: ViewRow, venue: string | null): ReportView['surfacing'] {
   const { price_band_low: low, price_band_high: high, currency } = row;
   return {
     channel: row.channel,
@@ -202,7 +206,7 @@ function toSurfacing(row: ViewRow): ReportView['surfacing'] {
     priceBand: low !== null && high !== null && currency !== null ? { low, high, currency } : null,
     detail: row.has_detail ? { surfacedOn: row.surfaced_on, town: row.town ?? '',
       price: row.price, currency } : null,
-    venue: row.venue,
+    venue,
   };
 }
 

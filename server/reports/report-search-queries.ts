@@ -1,0 +1,196 @@
+import type { Knex } from 'knex';
+import type { PlacedPhotoView } from '#shared/reports/photo';
+import { facetNames, type FacetCount, type FacetName, type NamedTell,
+  type ReportCard } from '#shared/reports/report-view';
+import type { WatchFilter } from '#shared/watches/watch-filter';
+import type { Transaction } from '../db/database';
+import type { SearchCursor } from './report-search-schemas';
+
+export type FacetCounts = Readonly<Record<FacetName, readonly FacetCount[]>>;
+
+export interface SearchTotals {
+  readonly count: number;
+  readonly facets: FacetCounts;
+}
+
+/** Values shown for one facet, the most frequent first. */
+const valuesPerFacet = 60;
+
+const columnOf: Readonly<Record<Exclude<FacetName, 'tell'>, string>> = {
+  coinType: 's.coin_type_slug', metal: 's.metal', kind: 's.kind', channel: 's.channel',
+  country: 's.country', confidence: 's.confidence',
+};
+
+/**
+ * Narrows a query over `visible_report_search as s` to what the filter says. Search, counts and
+ * the matching of watches all go through here, so that a saved search means what it showed.
+ */
+export function applyFilter(
+  query: Knex.QueryBuilder, filter: WatchFilter, except?: FacetName,
+): Knex.QueryBuilder {
+  if (filter.text && hasWords(filter.text)) {
+    void query.whereRaw('s.words @@ search_query(?)', [filter.text]);
+  }
+  for (const name of facetNames) {
+    const values = filter[name];
+    if (!values?.length || name === except) continue;
+    if (name === 'tell') void query.whereRaw('s.tells && ?::text[]', [[...values]]);
+    else void query.whereIn(columnOf[name], [...values]);
+  }
+  if (filter.yearFrom !== undefined) void query.where('s.year', '>=', filter.yearFrom);
+  if (filter.yearTo !== undefined) void query.where('s.year', '<=', filter.yearTo);
+  return query;
+}
+
+/** True where the filter narrows anything, other than by the facet `except`. */
+export function narrows(filter: WatchFilter, except?: FacetName): boolean {
+  return hasWords(filter.text ?? '') || filter.yearFrom !== undefined
+    || filter.yearTo !== undefined
+    || facetNames.some((name) => name !== except && (filter[name]?.length ?? 0) > 0);
+}
+
+/** Text of nothing but punctuation has no words and narrows nothing. */
+function hasWords(text: string): boolean {
+  return /[\p{L}\p{N}]/u.test(text);
+}
+
+function visibleReports(trx: Transaction): Knex.QueryBuilder {
+  return trx.from({ s: 'visible_report_search' });
+}
+
+interface CardRow {
+  readonly report_id: string; readonly cursor_at: string; readonly number: string;
+  readonly title: string; readonly coin_type_slug: string | null;
+  readonly coin_type_name: string | null; readonly kind: ReportCard['kind'];
+  readonly metal: string | null; readonly year: number | null;
+  readonly mint_mark: string | null; readonly confidence: ReportCard['confidence'];
+  readonly channel: ReportCard['channel']; readonly country: string; readonly region: string;
+  readonly surfaced_month: string; readonly published_at: Date;
+  readonly published_audience: ReportCard['audience'];
+  readonly card: {
+    readonly photos: readonly Omit<PlacedPhotoView, 'caption'>[];
+    readonly tells: readonly NamedTell[];
+    readonly methodId: string | null;
+    readonly pieceCount: number;
+  };
+}
+
+/** A page of cards, the newest publication first, with the place of each for paging by key. */
+export async function listCards(trx: Transaction, filter: WatchFilter, page: {
+  readonly after?: SearchCursor | undefined; readonly limit: number;
+}): Promise<{ readonly card: ReportCard; readonly cursor: SearchCursor }[]> {
+  const query = applyFilter(selectCards(trx), filter)
+    .orderBy([{ column: 's.published_at', order: 'desc' },
+      { column: 's.report_id', order: 'desc' }])
+    .limit(page.limit);
+  if (page.after) {
+    void query.whereRaw('(s.published_at, s.report_id) < (?::timestamptz, ?::uuid)',
+      [page.after.publishedAt, page.after.reportId]);
+  }
+  const rows: CardRow[] = await query;
+  return rows.map((row) => ({
+    card: toCard(row), cursor: { publishedAt: row.cursor_at, reportId: row.report_id },
+  }));
+}
+
+/** The card of one report that the actor may read, by its number. */
+export async function findCard(trx: Transaction, number: string): Promise<ReportCard | undefined> {
+  const row: CardRow | undefined = await selectCards(trx).where('s.number', number).first();
+  return row && toCard(row);
+}
+
+function selectCards(trx: Transaction): Knex.QueryBuilder {
+  return visibleReports(trx).leftJoin('coin_type', 'coin_type.id', 's.coin_type_id')
+    .select('s.report_id', 's.number', 's.title', 's.coin_type_slug',
+      'coin_type.name as coin_type_name', 's.kind', 's.metal', 's.year', 's.mint_mark',
+      's.confidence', 's.channel', 's.country', 's.region', 's.surfaced_month',
+      's.published_at', 's.published_audience', 's.card',
+      // With microseconds, which a Date would lose, and rows between them with it.
+      trx.raw(`to_char(s.published_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')
+        as cursor_at`));
+}
+
+function toCard(row: CardRow): ReportCard {
+  const { photos, tells, methodId, pieceCount } = row.card;
+  return {
+    number: row.number, title: row.title,
+    coinType: row.coin_type_slug === null ? null
+      : { slug: row.coin_type_slug, name: row.coin_type_name ?? '' },
+    kind: row.kind, metal: row.metal, year: row.year, mintMark: row.mint_mark,
+    confidence: row.confidence, methodId, tells, channel: row.channel, country: row.country,
+    region: row.region, surfacedMonth: row.surfaced_month.slice(0, 7),
+    publishedAt: row.published_at.toISOString(), audience: row.published_audience, pieceCount,
+    photos: (['obverse', 'reverse'] as const)
+      .flatMap((side) => photos.find((photo) => photo.side === side) ?? []),
+  };
+}
+
+/** How many reports the filter finds for the actor. */
+export async function countReports(trx: Transaction, filter: WatchFilter): Promise<number> {
+  const row = await applyFilter(visibleReports(trx), filter).count({ count: '*' }).first();
+  return Number(row?.['count'] ?? 0);
+}
+
+interface CountRow {
+  /** A facet, `own` and a facet, or `total`. */
+  readonly facet: string;
+  readonly value: string | null;
+  readonly count: number;
+}
+
+/**
+ * The total and the counts of each facet, in one statement. A facet's own selection does not
+ * narrow its own counts. Where a facet is the only thing that narrows, its counts are those of
+ * `unfiltered`.
+ */
+export async function countFacets(
+  trx: Transaction, filter: WatchFilter, unfiltered?: SearchTotals,
+): Promise<SearchTotals> {
+  const selected = facetNames.filter((name) => filter[name]?.length);
+  const hits = applyFilter(visibleReports(trx).select('s.coin_type_slug', 's.metal', 's.kind',
+    's.channel', 's.country', 's.confidence', 's.tells'), filter);
+  const parts: Knex.Raw[] = [trx.raw(
+    `select case when grouping(s.coin_type_slug) = 0 then 'coinType'
+         when grouping(s.metal) = 0 then 'metal' when grouping(s.kind) = 0 then 'kind'
+         when grouping(s.channel) = 0 then 'channel' when grouping(s.country) = 0 then 'country'
+         when grouping(s.confidence) = 0 then 'confidence' else 'total' end as facet,
+       coalesce(s.coin_type_slug, s.metal, s.kind, s.channel, s.country, s.confidence) as value,
+       count(*) as count
+     from hit s group by grouping sets ((s.coin_type_slug), (s.metal), (s.kind), (s.channel),
+       (s.country), (s.confidence), ())
+     union all
+     select 'tell', t.tell, count(*) from hit s cross join unnest(s.tells) as t (tell)
+      group by t.tell`)];
+  const counted = selected.filter((name) => !unfiltered || narrows(filter, name));
+  for (const name of counted) parts.push(ownCounts(trx, filter, name));
+  const { rows }: { rows: CountRow[] } = await trx.raw(
+    `with hit as materialized (?) ${parts.map(() => '?').join(' union all ')}`,
+    [hits, ...parts]);
+  const facets = Object.fromEntries(facetNames.map((name) => [name,
+    selected.includes(name) && !counted.includes(name) ? unfiltered?.facets[name] ?? []
+      : topCounts(rows, selected.includes(name) ? `own ${name}` : name, filter[name] ?? [])]));
+  return {
+    count: rows.find((row) => row.facet === 'total')?.count ?? 0,
+    // Object.fromEntries forgets that every facet has its entry.
+    facets: facets as Record<FacetName, FacetCount[]>,
+  };
+}
+
+/** Counts of one facet under all the other conditions. */
+function ownCounts(trx: Transaction, filter: WatchFilter, name: FacetName): Knex.Raw {
+  const value = name === 'tell' ? 't.tell' : columnOf[name];
+  const query = applyFilter(visibleReports(trx), filter, name);
+  if (name === 'tell') void query.joinRaw('cross join unnest(s.tells) as t (tell)');
+  return trx.raw('?', [query.select(trx.raw('? as facet', [`own ${name}`]),
+    `${value} as value`).count({ count: '*' }).groupBy(value)]);
+}
+
+/** The most frequent values; one that is selected is kept however rare. */
+function topCounts(
+  rows: readonly CountRow[], facet: string, chosen: readonly string[],
+): FacetCount[] {
+  const counts = rows.flatMap((row) => row.facet === facet && row.value !== null
+    ? [{ value: row.value, count: row.count }] : [])
+    .sort((a, b) => b.count - a.count || (a.value < b.value ? -1 : 1));
+  return counts.filter((each, index) => index < valuesPerFacet || chosen.includes(each.value));
+}
