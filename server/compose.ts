@@ -1,16 +1,30 @@
+import { join } from 'node:path';
 import type { Logger } from 'pino';
 import { accountsRoutes } from './accounts/accounts-routes';
 import { createAccountsService } from './accounts/accounts-service';
 import { createPasswords } from './accounts/passwords';
+import { catalogueRoutes } from './catalogue/catalogue-routes';
 import { clubsRoutes } from './clubs/clubs-routes';
 import { createClubsService } from './clubs/clubs-service';
 import type { Config } from './config';
 import type { Database } from './db/database';
+import { draftsRoutes } from './drafts/drafts-routes';
+import { createDraftsService } from './drafts/drafts-service';
 import { healthRoutes } from './health-routes';
 import type { Route } from './http/route';
+import { createPhotoDecoder } from './images/photo-decoder';
+import { createDiskPhotoStore } from './images/photo-store';
 import { startJobQueue } from './jobs/job-queue';
 import { noticesRoutes } from './notices/notices';
+import { photosRoutes } from './photos/photos-routes';
+import { createPhotosService } from './photos/photos-service';
 import { mailLedgerRoutes } from './registry/mail-ledger-routes';
+import { filingRoutes } from './reports/filing-routes';
+import { createFilingService } from './reports/filing-service';
+import { createReportSearchService } from './reports/report-search-service';
+import { reportsRoutes } from './reports/reports-routes';
+import { createReportsService } from './reports/reports-service';
+import { createUnfilteredTotals } from './reports/search-totals';
 
 export interface Parts {
   readonly config: Config;
@@ -30,15 +44,31 @@ export async function composeRoutes(
 ): Promise<ComposedRoutes> {
   const accounts = createAccountsService(config, createPasswords(config.environment));
   const clubs = createClubsService(config);
+  const incoming = join(config.photoDirectory, 'incoming');
+  const decoder = createPhotoDecoder();
+  const photos = createPhotosService({
+    database, decoder, incoming, store: createDiskPhotoStore(join(config.photoDirectory, 'kept')),
+  });
+  const reports = createReportsService();
+  const filing = createFilingService(config, () => new Date());
+  const search = createReportSearchService(createUnfilteredTotals(Date.now));
   const queue = await startJobQueue(config.databaseUrl, logger, 'enqueue');
   return {
     routes: [
       ...healthRoutes(database),
       ...accountsRoutes(database, accounts, config),
       ...clubsRoutes(database, clubs),
+      ...catalogueRoutes(database),
+      ...photosRoutes(photos, incoming),
+      ...draftsRoutes(database, createDraftsService()),
+      ...reportsRoutes(database, reports, search),
+      ...filingRoutes(database, filing, reports),
       ...noticesRoutes(database),
       ...mailLedgerRoutes(database),
     ],
-    stop: () => queue.stop(),
+    stop: async () => {
+      decoder.close();
+      await queue.stop();
+    },
   };
 }

@@ -1,4 +1,6 @@
 import type { Audience, Disclosure } from '#shared/access/audience';
+import { nominalDiameterMillimetres,
+  type QuantityStandard } from '#shared/coin-types/coin-type-standard';
 import type { PlacedPhotoView } from '#shared/reports/photo';
 import type { Channel, Component, Condition, Confidence, ConfidenceBasis, PieceKind, PinPlace,
   ReportState, Metal, Whereabouts } from '#shared/reports/report-content';
@@ -32,7 +34,7 @@ select r.number, r.state, r.row_version, r.audience as asked_audience, r.publish
   v.piece_count, v.condition, v.whereabouts, v.account_html, seen.evidence,
   reporter_name(r.id) as reporter_name, holds_back_tells(r.id, v.version) as held_back,
   m.id as method_id, m.name as method_name, ct.slug as type_slug, ct.name as type_name,
-  ct.issuer as type_issuer, cr.standard #> '{diameter,nominal}' as type_diameter,
+  ct.issuer as type_issuer, cr.standard -> 'diameter' as type_diameter,
   case when seen.evidence or cardinality(actor_clubs()) > 0 then c.slug end as club_slug,
   c.name as club_name, into_report.number as merged_into,
   retraction_reason(r.id) as retraction_reason,
@@ -113,7 +115,7 @@ interface ViewRow {
   readonly method_id: string | null; readonly method_name: string | null;
   readonly type_slug: string | null; readonly type_name: string | null;
   readonly type_issuer: string | null;
-  readonly type_diameter: { readonly value: number } | null;
+  readonly type_diameter: QuantityStandard | null;
   readonly club_slug: string | null; readonly club_name: string;
   readonly merged_into: string | null; readonly retraction_reason: string | null;
   readonly confidence: Confidence | null; readonly basis: readonly ConfidenceBasis[] | null;
@@ -147,7 +149,8 @@ function toView(row: ViewRow, wanted: WantedVersion): ReportView {
     presentedAs: { coinType: row.type_slug, kind: piece.kind, metal: piece.metal,
       description: piece.description, year: piece.year, mintMark: piece.mintMark },
     coinType: row.type_slug === null ? null : { slug: row.type_slug, name: row.type_name ?? '',
-      issuer: row.type_issuer ?? '', diameterMillimetres: row.type_diameter?.value ?? null },
+      issuer: row.type_issuer ?? '', diameterMillimetres: row.type_diameter && nominalDiameterMillimetres({
+        diameter: row.type_diameter, variants: [], dateTable: null, notes: [] }) },
     components: row.components ?? [],
     pieceCount: row.piece_count,
     condition: row.condition,
