@@ -1,6 +1,6 @@
 import { Routes } from '@angular/router';
 
-import { requireRole, requireSignIn } from './auth/role-guards';
+import { requireMember, requireRole, requireSignIn } from './auth/role-guards';
 
 /** Every screen is fetched when it is first asked for; a feature's own routes set its titles. */
 export const routes: Routes = [
@@ -29,7 +29,7 @@ export const routes: Routes = [
   },
   {
     path: 'file',
-    canActivate: [requireRole('member')],
+    canActivate: [requireMember],
     loadChildren: () => import('./filing/filing.routes').then((file) => file.filingRoutes),
   },
   {

@@ -7,7 +7,7 @@ import { RouterTestingHarness } from '@angular/router/testing';
 import { SignedInPerson } from '#shared/accounts/session';
 
 import { safeReturnAddress } from './return-address';
-import { requireRole, requireSignIn } from './role-guards';
+import { requireMember, requireRole, requireSignIn } from './role-guards';
 import { SessionStore } from './session-store';
 
 @Component({ selector: 'tn-screen', template: '<p i18n>the screen</p>' })
@@ -16,6 +16,8 @@ class Screen {}
 class Door {}
 @Component({ selector: 'tn-nothing', template: '<p i18n>nothing here</p>' })
 class Nothing {}
+@Component({ selector: 'tn-roles', template: '<p i18n>ask a secretary</p>' })
+class Roles {}
 
 const moderator: SignedInPerson = {
   id: 'p1',
@@ -40,6 +42,8 @@ describe('signing in and the guards', () => {
           { path: 'desk', component: Screen, canActivate: [requireRole('moderator')] },
           { path: 'ledger', component: Screen, canActivate: [requireRole('registrar')] },
           { path: 'mine', component: Screen, canActivate: [requireSignIn] },
+          { path: 'file', component: Screen, canActivate: [requireMember] },
+          { path: 'handbook/roles', component: Roles },
           { path: 'sign-in', component: Door },
           { path: '**', component: Nothing },
         ]),
@@ -61,6 +65,9 @@ describe('signing in and the guards', () => {
     ['/desk', moderator, 'the screen'],
     ['/ledger', moderator, 'nothing here'],
     ['/mine', moderator, 'the screen'],
+    ['/file', moderator, 'the screen'],
+    ['/file', { ...moderator, memberships: [] }, 'ask a secretary'],
+    ['/file', null, 'sign in here'],
     ['/desk', null, 'sign in here'],
     ['/mine', null, 'sign in here'],
   ])('on %s leads to the right place', async (path, person, text) => {
@@ -93,6 +100,8 @@ describe('safeReturnAddress', () => {
     ['/\\elsewhere.example', '/'],
     ['https://elsewhere.example', '/'],
     ['/sign-in?returnTo=/x', '/'],
+    ['/password/abc', '/'],
+    ['/registry/mail', '/registry/mail'],
     [undefined, '/'],
   ])('of %s is %s', (asked, answer) => {
     expect(safeReturnAddress(asked)).toBe(answer);

@@ -31,6 +31,18 @@ export function requireRole(...roles: readonly [Role, ...Role[]]): CanActivateFn
   };
 }
 
+/** Filing is for members of a club: others are shown how one becomes a member. */
+export const requireMember: CanActivateFn = (route, state) => {
+  const router = inject(Router);
+  const session = inject(SessionStore);
+  return session.whenKnown().pipe(
+    map((person) => {
+      if (!person) return signInFirst(router, state.url);
+      return session.hasRole('member') || router.parseUrl('/handbook/roles');
+    }),
+  );
+};
+
 function signInFirst(router: Router, returnTo: string): RedirectCommand {
   return new RedirectCommand(router.createUrlTree(['/sign-in'], { queryParams: { returnTo } }));
 }
