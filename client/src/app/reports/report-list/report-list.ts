@@ -38,6 +38,7 @@ import {
 import { ActiveFilter, activeFilters } from './active-filters';
 
 const typingPauseMilliseconds = 250;
+const noSearch: SearchAddress = { filter: {}, exact: false, after: null };
 
 /** Published reports: search by number or words, filters with counts, all of it in the address. */
 @Component({
@@ -60,7 +61,7 @@ export class ReportList {
 
   private readonly address$ = inject(ActivatedRoute).queryParamMap.pipe(map(searchOfAddress));
   protected readonly address = toSignal(this.address$, {
-    initialValue: { filter: {}, exact: false, after: null } satisfies SearchAddress,
+    initialValue: noSearch,
   });
   protected readonly answer = toSignal(
     combineLatest([this.address$, this.reload]).pipe(
