@@ -11,9 +11,9 @@ export async function cameraJpeg(width = 600, height = 800): Promise<Buffer> {
   const blue = await sharp({ create: { ...half, background: '#2020c0' } }).png().toBuffer();
   return sharp({ create: { width: height, height: width, channels: 3, background: '#000' } })
     .composite([{ input: red, left: 0, top: 0 }, { input: blue, left: height / 2, top: 0 }])
-    .jpeg().withExif({ IFD3: { GPSLatitudeRef: 'N', GPSLatitude: '51/1 30/1 0/1' } })
-    .withMetadata({ orientation: 6, exif: {
-      IFD3: { GPSLatitudeRef: 'N', GPSLatitude: '51/1 30/1 0/1' } } })
+    .jpeg().withMetadata({ orientation: 6, exif: { IFD3: {
+      GPSLatitudeRef: 'N', GPSLatitude: '51/1 30/1 0/1',
+      GPSLongitudeRef: 'W', GPSLongitude: '2/1 15/1 0/1' } } })
     .toBuffer();
 }
 
