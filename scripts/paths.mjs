@@ -13,10 +13,14 @@ export const dataRoot = process.getuid?.() === 0
   ? join('/var/lib/touchneedle', hash.slice(0, 12))
   : join(homedir(), '.local/share/touchneedle', hash.slice(0, 12));
 
+/** Test clusters, one a run, apart from the registry's own data. */
+export const testDataRoot = `${dataRoot}-test`;
+
 /**
- * A port of this clone's own, so that two clones never share a cluster.
- * @param {number} offset apart from the clone's other ports
+ * A port of this clone's own, so that two clones never share a cluster. Below the range (32768 and
+ * up) that the system hands to outgoing connections.
+ * @param {number} offset 0 to 9, apart from the clone's other ports
  */
 export function ownPort(offset) {
-  return 20000 + (parseInt(hash.slice(0, 8), 16) % 1900) * 10 + offset;
+  return 20000 + (parseInt(hash.slice(0, 8), 16) % 1200) * 10 + offset;
 }

@@ -1,12 +1,33 @@
 import { spawn } from 'node:child_process';
 import { PlainError } from './plain-error.mjs';
 
+/** Commands under way, each the head of a process group, so that a stop reaches all of it. */
+const underWay = new Set();
+
+/** Ends what `run` and `runToEnd` have under way, with all that those started in turn. */
+export function stopCommands() {
+  for (const child of underWay) signalGroup(child.pid, 'SIGTERM');
+}
+
+/**
+ * @param {number} pid head of a process group
+ * @param {NodeJS.Signals} signal
+ * @returns {boolean} whether there was one to receive it
+ */
+export function signalGroup(pid, signal) {
+  try {
+    return process.kill(-pid, signal);
+  } catch {
+    return false;
+  }
+}
+
 /**
  * Runs a command to its end. Rejects with its last lines where it fails.
  * @param {string} command
  * @param {string[]} values
  * @param {{ cwd?: string, env?: NodeJS.ProcessEnv, uid?: number, gid?: number,
- *   echo?: boolean, input?: string }} [options]
+ *   input?: string }} [options]
  * @returns {Promise<string>} what it printed
  */
 export async function run(command, values, options = {}) {
@@ -17,7 +38,7 @@ export async function run(command, values, options = {}) {
 }
 
 /**
- * Runs a command to its end, whatever its exit code.
+ * Runs a command to its end, whatever its exit code (127 where there is no such command).
  * @param {string} command
  * @param {string[]} values
  * @param {Parameters<typeof run>[2]} [options]
@@ -25,19 +46,24 @@ export async function run(command, values, options = {}) {
  */
 export function runToEnd(command, values, options = {}) {
   return new Promise((resolve) => {
-    const { echo = false, input, ...rest } = options;
-    const child = spawn(command, values, { stdio: ['pipe', 'pipe', 'pipe'], ...rest });
+    const { input, ...rest } = options;
+    const child = spawn(command, values, { ...rest, detached: true, stdio: 'pipe' });
+    underWay.add(child);
     let output = '';
     for (const stream of [child.stdout, child.stderr]) {
       stream.setEncoding('utf8');
-      stream.on('data', (text) => {
-        output += text;
-        if (echo) process.stdout.write(text);
-      });
+      stream.on('data', (text) => { output += text; });
     }
     child.stdin.on('error', () => undefined);
     child.stdin.end(input ?? '');
-    child.on('error', (error) => resolve({ code: 127, output: `${output}${error.message}` }));
-    child.on('close', (code) => resolve({ code: code ?? 1, output }));
+    const settle = (code) => {
+      underWay.delete(child);
+      resolve({ code, output });
+    };
+    child.on('error', (error) => {
+      output += error.message;
+      settle(127);
+    });
+    child.on('close', (code) => settle(code ?? 1));
   });
 }

@@ -1,134 +1,170 @@
 /**
  * npm start: makes and starts all that a working registry needs, on this machine alone.
- * --empty: without the demonstration, in a database of its own, for a registry to be set up.
+ *
+ *   --empty    without the demonstration, in a database of its own, for a registry to be set up
+ *
+ * Read from the environment: PORT (4310); MAIL_PORT (4311) and SMTP_PORT (4312) of the mail
+ * catcher; BASE_URL, MAIL_FROM, LOG_LEVEL.
  */
-import { existsSync, mkdirSync, readFileSync } from 'node:fs';
+import { mkdirSync } from 'node:fs';
 import { join } from 'node:path';
 import { setTimeout as delay } from 'node:timers/promises';
+import { announcement } from './announcement.mjs';
 import { Children } from './children.mjs';
 import { ensureClientBuild } from './client-build.mjs';
-import { addressOf, ensureDatabase, startCluster } from './cluster.mjs';
+import { addressOf, clusterVersion, ensureDatabase, startCluster } from './cluster.mjs';
 import { ensurePostgres } from './debian-packages.mjs';
 import { checkNode, ensurePackages } from './npm-packages.mjs';
-import { dataRoot, ownPort, root } from './paths.mjs';
-import { exitWith, PlainError } from './plain-error.mjs';
-import { demandPort } from './ports.mjs';
+import { dataRoot, root } from './paths.mjs';
+import { PlainError } from './plain-error.mjs';
+import { demandPort, freeOwnPort, portFrom } from './ports.mjs';
 import { run } from './run.mjs';
+import { StarterLock } from './starter-lock.mjs';
+import { Stopping } from './stopping.mjs';
 
-const isEmpty = process.argv.includes('--empty');
 const began = Date.now();
-const port = Number(process.env.PORT ?? 4310);
-const mailPort = Number(process.env.MAIL_PORT ?? 4311);
-const smtpPort = Number(process.env.SMTP_PORT ?? 4312);
-
-let stopAll = async () => undefined;
-let isStopping = false;
-
-/** @param {number} code */
-async function stop(code) {
-  if (isStopping) return;
-  isStopping = true;
-  await stopAll();
-  process.exit(code);
-}
-for (const signal of ['SIGINT', 'SIGTERM', 'SIGHUP']) process.on(signal, () => void stop(0));
-
-try {
-  await start();
-} catch (error) {
-  await stopAll();
-  exitWith(error);
-}
+const stopping = new Stopping(0);
+await stopping.during(start);
 
 async function start() {
   checkNode();
-  const programs = await ensurePostgres();
-  await demandPort(port, 'the site', 'PORT');
-  await demandPort(mailPort, 'the mail catcher', 'MAIL_PORT');
-  await demandPort(smtpPort, 'the mail catcher’s SMTP', 'SMTP_PORT');
+  const isEmpty = readArguments(process.argv.slice(2));
+  const ports = { site: portFrom('PORT', 4310), mail: portFrom('MAIL_PORT', 4311),
+    smtp: portFrom('SMTP_PORT', 4312) };
+  const lock = await StarterLock.take(dataRoot,
+    `Touchneedle already runs from this clone, at http://localhost:${ports.site}`);
+  stopping.undoWith(() => lock.release());
+  await demandPort(ports.site, 'the site', 'PORT');
+  await demandPort(ports.mail, 'the pages of the mail catcher', 'MAIL_PORT');
+  await demandPort(ports.smtp, 'the mail catcher', 'SMTP_PORT');
+  const programs = await ensurePostgres(clusterVersion(dataRoot));
+  stopping.check();
   await ensurePackages();
+  stopping.check();
   await ensureClientBuild();
+  stopping.check();
 
-  const place = { programs, folder: dataRoot, port: ownPort(0) };
-  const cluster = await startCluster(place);
-  stopAll = () => cluster.stop();
-  const database = isEmpty ? 'touchneedle_empty' : 'touchneedle';
-  await ensureDatabase(place, cluster.secrets, database);
-  const environment = environmentFor(place, cluster.secrets, database);
-  const node = (...values) => run(process.execPath, ['--import', 'tsx', ...values],
-    { cwd: root, env: environment, echo: false });
-  await node('database/migrate.ts');
-  await node('database/seed.ts', 'catalogue');
-  if (!isEmpty) await node('database/seed.ts', 'demo');
-  const setupPath = isEmpty ? (await node('database/seed.ts', 'setup-link')).trim() : '';
+  const cluster = await startCluster({ programs, folder: dataRoot, port: await freeOwnPort(0) },
+    lock, tellDeath);
+  stopping.undoWith(() => cluster.stop());
+  const places = placesFor(isEmpty);
+  const environment = environmentFor(cluster, ports, places);
+  const setupPath = await prepareDatabase(cluster, environment, places, isEmpty);
 
-  const children = new Children((name, log) => {
-    console.error(`\nThe ${name} ended by itself. Its last words:\n${log}`);
-    void stop(1);
-  });
-  stopAll = async () => {
-    await children.stop();
-    await cluster.stop();
-  };
-  mkdirSync(join(dataRoot, 'mail'), { recursive: true });
-  children.start('mail catcher', [join(root, 'node_modules/maildev/bin/maildev'),
-    '--ip', '127.0.0.1', '--web-ip', '127.0.0.1', '--smtp', String(smtpPort),
-    '--web', String(mailPort), '--mail-directory', join(dataRoot, 'mail')], environment);
+  const children = new Children(lock, join(dataRoot, 'logs'), tellDeath);
+  stopping.undoWith(() => children.stop());
+  children.start('mail catcher', ['node_modules/maildev/bin/maildev', '--ip', '127.0.0.1',
+    '--web-ip', '127.0.0.1', '--smtp', String(ports.smtp), '--web', String(ports.mail),
+    '--mail-directory', places.mail], { PATH: process.env.PATH });
   children.start('server', ['--import', 'tsx', 'server/main.ts'], environment);
   children.start('worker', ['--import', 'tsx', 'server/worker.ts'], environment);
-  await waitForHealth();
-  announce(setupPath);
+  await waitForAnswer(`http://127.0.0.1:${ports.mail}/`, 'mail catcher');
+  await waitForAnswer(`http://127.0.0.1:${ports.site}/api/health`, 'server');
+  console.log(announcement({ ports, setupPath, isEmpty, dataRoot,
+    seconds: (Date.now() - began) / 1000 }));
 }
 
-function environmentFor(place, secrets, database) {
-  const photos = join(dataRoot, isEmpty ? 'photos-empty' : 'photos');
-  mkdirSync(photos, { recursive: true });
+/**
+ * @param {string[]} values
+ * @returns {boolean} whether to start without the demonstration
+ */
+function readArguments(values) {
+  const unknown = values.find((value) => value !== '--empty');
+  if (unknown) {
+    throw new PlainError(`npm start does not know ${unknown}. It knows one option: `
+      + 'npm run start -- --empty, a registry without the demonstration.');
+  }
+  return values.includes('--empty');
+}
+
+/**
+ * The demonstration and an empty registry share the cluster and nothing else.
+ * @param {boolean} isEmpty
+ */
+function placesFor(isEmpty) {
+  const suffix = isEmpty ? '-empty' : '';
+  const places = { database: isEmpty ? 'touchneedle_empty' : 'touchneedle',
+    photos: join(dataRoot, `photos${suffix}`), mail: join(dataRoot, `mail${suffix}`) };
+  // Photos not yet published, and mails with their links, are no other user's business.
+  for (const folder of [places.photos, places.mail]) {
+    mkdirSync(folder, { recursive: true, mode: 0o700 });
+  }
+  return places;
+}
+
+/**
+ * @param {import('./cluster.mjs').Cluster} cluster
+ * @param {{ site: number, smtp: number }} ports
+ * @param {ReturnType<typeof placesFor>} places
+ * @returns {NodeJS.ProcessEnv} of the server and the worker
+ */
+function environmentFor(cluster, ports, places) {
   return {
+    NODE_ENV: 'production',
+    TOUCHNEEDLE_ENV: 'production',
+    LOG_LEVEL: 'warn',
+    BASE_URL: `http://localhost:${ports.site}`,
     ...process.env,
-    PORT: String(port),
-    BASE_URL: process.env.BASE_URL ?? `http://localhost:${port}`,
-    DATABASE_URL: addressOf(place, 'touchneedle_app', secrets.app, database),
-    DATABASE_OWNER_URL: addressOf(place, 'touchneedle_owner', secrets.owner, database),
-    SESSION_SECRET: secrets.session,
-    REPORT_NUMBER_KEY: secrets.number,
-    MAIL_TOKEN_KEY: secrets.mail,
-    SMTP_URL: process.env.SMTP_URL ?? `smtp://127.0.0.1:${smtpPort}`,
-    PHOTO_DIRECTORY: photos,
+    PORT: String(ports.site),
+    DATABASE_URL: addressOf(cluster, 'app', places.database),
+    SESSION_SECRET: cluster.secrets.session,
+    REPORT_NUMBER_KEY: cluster.secrets.number,
+    MAIL_TOKEN_KEY: cluster.secrets.mail,
+    SMTP_URL: `smtp://127.0.0.1:${ports.smtp}`,
+    PHOTO_DIRECTORY: places.photos,
     CLIENT_DIRECTORY: join(root, 'dist/client'),
     DEMO_PICTURES_DIRECTORY: join(root, '.cache/demo-pictures'),
-    LOG_LEVEL: process.env.LOG_LEVEL ?? 'warn',
   };
 }
 
-async function waitForHealth() {
-  const deadline = Date.now() + 60_000;
-  while (Date.now() < deadline && !isStopping) {
-    try {
-      const answer = await fetch(`http://127.0.0.1:${port}/api/health`);
-      if (answer.ok) return;
-    } catch { /* not listening yet */ }
-    await delay(100);
-  }
-  if (!isStopping) throw new PlainError('The server did not answer within a minute.');
+/**
+ * @param {import('./cluster.mjs').Cluster} cluster
+ * @param {NodeJS.ProcessEnv} environment
+ * @param {ReturnType<typeof placesFor>} places
+ * @param {boolean} isEmpty
+ * @returns {Promise<string>} path at which the first registrar is set up, '' where there is one
+ */
+async function prepareDatabase(cluster, environment, places, isEmpty) {
+  await ensureDatabase(cluster, places.database);
+  // The owner's address goes to these alone: the server and the worker own nothing.
+  const env = { ...environment, DATABASE_OWNER_URL: addressOf(cluster, 'owner', places.database) };
+  const script = (...values) => {
+    stopping.check();
+    return run(process.execPath, ['--import', 'tsx', ...values], { cwd: root, env });
+  };
+  console.log('Bringing the database up to date …');
+  await script('database/migrate.ts');
+  await script('database/seed.ts', 'catalogue');
+  if (isEmpty) return (await script('database/seed.ts', 'setup-link')).trim();
+  await script('database/seed.ts', 'demo');
+  return '';
 }
 
-function announce(setupPath) {
-  const lines = ['', `Touchneedle is ready (${((Date.now() - began) / 1000).toFixed(1)} s).`, '',
-    `  The registry     http://localhost:${port}`,
-    `  The mail catcher http://localhost:${mailPort}`,
-    `  Data             ${dataRoot}`];
-  if (setupPath) {
-    lines.push('', '  Set up the first registrar, once, within a day, at',
-      `  http://localhost:${port}${setupPath}`);
-  }
-  const accounts = join(root, 'database/seeds/demo-accounts.json');
-  if (!isEmpty && existsSync(accounts)) {
-    lines.push('', '  Demonstration accounts');
-    for (const account of JSON.parse(readFileSync(accounts, 'utf8'))) {
-      lines.push(`  ${account.email.padEnd(34)} ${account.password.padEnd(28)} ${account.role}${
-        account.club ? `, ${account.club}` : ''}`);
+/**
+ * @param {string} name
+ * @param {string} words its last lines
+ */
+function tellDeath(name, words) {
+  if (stopping.isUnderWay) return;
+  console.error(`\nThe ${name} ended by itself; the rest is stopped. Its last lines:\n\n${words}\n`);
+  void stopping.end(1);
+}
+
+/**
+ * @param {string} address
+ * @param {string} name
+ */
+async function waitForAnswer(address, name) {
+  const deadline = Date.now() + 60_000;
+  while (Date.now() < deadline) {
+    stopping.check();
+    try {
+      if ((await fetch(address, { signal: AbortSignal.timeout(5_000) })).ok) return;
+    } catch {
+      // Not listening yet.
     }
+    await delay(100);
   }
-  lines.push('', '  Ctrl-C stops everything and keeps the data.', '');
-  console.log(lines.join('\n'));
+  throw new PlainError(`The ${name} did not answer at ${address} within a minute. Its log is in ${
+    join(dataRoot, 'logs')}.`);
 }
