@@ -59,7 +59,7 @@ export function parseReportNumber(text: string): ParsedReportNumber {
   return { number: `${prefix}-${body.slice(2, 4)}-${serial}-${bare.slice(-1)}` };
 }
 
-/** A keyed function of a round (0 to 9) and a half; any integer ≥ 0, of which low bits are used. */
+/** A keyed function of a round (0 to 9) and a half: any integer ≥ 0; its low bits are used. */
 export type RoundFunction = (round: number, half: number) => number;
 
 const rounds = 10;

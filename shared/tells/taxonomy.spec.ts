@@ -41,7 +41,8 @@ describe('suggestMethods', () => {
 
 describe('genuineFeaturesNamed', () => {
   const features = [{ id: 'die-crack' }, { id: 'wear' }, { id: 'clash-marks' }];
-  it.each([['A die crack runs to the rim', ['die-crack']], ['Die-cracks, wear', ['die-crack', 'wear']],
+  it.each([['A die crack runs to the rim', ['die-crack']],
+    ['Die-cracks, wear', ['die-crack', 'wear']],
     ['clash marks behind the head', ['clash-marks']], ['swear words', []], ['', []],
   ])('%j', (note, ids) => {
     expect(genuineFeaturesNamed(note, features).map(({ id }) => id)).toEqual(ids);
