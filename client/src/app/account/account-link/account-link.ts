@@ -91,8 +91,7 @@ export class AccountLink {
     if (this.form.invalid || this.busy()) return;
     this.busy.set(true);
     this.problem.set('');
-    const use: AccountLinkUse = { ...this.form.value, timeZone: this.timeZone };
-    this.api.useLink(this.token(), use).subscribe({
+    this.api.useLink(this.token(), this.answers()).subscribe({
       next: (view) => {
         // An invitation for an account that is there already signs nobody in.
         if (view.person) this.session.keep(view);
@@ -109,6 +108,17 @@ export class AccountLink {
 
   protected loadAgain(): void {
     this.reload.next();
+  }
+
+  /** A group with every control switched off gives all their values: hence one by one. */
+  private answers(): AccountLinkUse {
+    const { email, displayName, password } = this.form.controls;
+    return {
+      ...(email.enabled ? { email: email.value } : {}),
+      ...(displayName.enabled ? { displayName: displayName.value } : {}),
+      ...(password.enabled ? { password: password.value } : {}),
+      timeZone: this.timeZone,
+    };
   }
 
   /** Controls that this link does not need are switched off, and so neither checked nor sent. */
