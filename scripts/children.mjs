@@ -41,7 +41,8 @@ export class Children {
         resolve();
         if (!this.#isStopping) this.onDeath(name, words);
       };
-      child.on('exit', () => end(lastLines(log)));
+      child.on('exit', (code, signal) => end(`${lastLines(log)}\n(${
+        signal ? `ended by ${signal}` : `exit code ${code}`})`.trim()));
       child.on('error', (error) => end(error.message));
     });
     if (child.pid) this.lock.record(name, child.pid, 'SIGTERM');

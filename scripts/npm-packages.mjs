@@ -32,10 +32,10 @@ function isInstalled(lock) {
   const note = join(root, 'node_modules', '.package-lock.json');
   if (!existsSync(note)) return false;
   const { packages: there } = JSON.parse(readFileSync(note, 'utf8'));
-  const { '': _project, ...wanted } = lock.packages;
-  return Object.keys(there).every((path) => path in wanted)
-    && Object.entries(wanted).every(([path, { version, optional }]) =>
-      path in there ? there[path].version === version : optional === true);
+  // The lock file also names the project itself, by the empty path.
+  return Object.keys(there).every((path) => path in lock.packages)
+    && Object.entries(lock.packages).every(([path, { version, optional }]) =>
+      path in there ? there[path].version === version : optional === true || path === '');
 }
 
 /** @param {string} output of npm */

@@ -146,7 +146,8 @@ async function prepareDatabase(cluster, environment, places, isEmpty) {
  */
 function tellDeath(name, words) {
   if (stopping.isUnderWay) return;
-  console.error(`\nThe ${name} ended by itself; the rest is stopped. Its last lines:\n\n${words}\n`);
+  console.error(`\nThe ${name} ended by itself; the rest is stopped. Its last lines:\n\n${
+    words}\n`);
   void stopping.end(1);
 }
 
