@@ -1,6 +1,7 @@
 import type { FieldProblem } from '#shared/api-problem';
-import { disclosures, type Disclosure } from '#shared/access/audience';
+import type { Disclosure } from '#shared/access/audience';
 import type { Measurement, Quantity, ReportContent } from '#shared/reports/report-content';
+import { suggestMethods } from '#shared/tells/taxonomy';
 
 /** What the registry knows of the things that a filed content names. */
 export interface FilingFacts {
@@ -120,16 +121,12 @@ function checkAudience(
   if (new Date(content.embargoUntil) > latest) refuse('embargoUntil', 'too_far');
 }
 
-/** The narrower of what the reporter chose and what the taxonomy allows. */
-export function narrower(chosen: Disclosure, allowed: Disclosure): Disclosure {
-  return disclosures.indexOf(chosen) > disclosures.indexOf(allowed) ? chosen : allowed;
-}
-
 /** How it was made, where the tells leave one answer: the one method that all of them speak for. */
 export function clearMethod(content: ReportContent, facts: FilingFacts): string | null {
-  const methods = [...new Set(content.tells.map(({ tellId }) => tellId))]
-    .map((tellId) => facts.tells.get(tellId)?.methods ?? []).filter((each) => each.length > 0);
-  const shared = (methods[0] ?? []).filter((method) => methods.every((each) =>
-    each.includes(method)));
-  return shared.length === 1 ? shared[0] ?? null : null;
+  const tells = content.tells.flatMap(({ tellId }) => {
+    const methods = facts.tells.get(tellId)?.methods ?? [];
+    return methods.length ? [{ id: tellId, methods }] : [];
+  });
+  const agreed = suggestMethods(tells).filter(({ speakAgainst }) => speakAgainst.length === 0);
+  return agreed.length === 1 ? agreed[0]?.methodId ?? null : null;
 }

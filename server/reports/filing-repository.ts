@@ -1,7 +1,8 @@
 import type { ReportContent, ReportState, Pin } from '#shared/reports/report-content';
 import { priceBand } from '#shared/reports/price-band';
+import { narrowerDisclosure } from '#shared/tells/taxonomy';
 import type { Transaction } from '../db/database';
-import { narrower, type FilingFacts } from './filing-policy';
+import type { FilingFacts } from './filing-policy';
 
 export interface OwnReport {
   readonly id: string;
@@ -119,7 +120,7 @@ async function addTells(trx: Transaction, wanted: NewVersion): Promise<void> {
   const key = { report_id: wanted.reportId, version: wanted.version };
   const tells = wanted.content.tells.map((tell, position) => ({
     ...tell, position,
-    disclosure: narrower(tell.disclosure,
+    disclosure: narrowerDisclosure(tell.disclosure,
       wanted.facts.tells.get(tell.tellId)?.disclosure ?? 'moderators'),
   }));
   await addRows(trx, 'report_tell', tells.map((tell) => ({

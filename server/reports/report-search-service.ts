@@ -1,5 +1,5 @@
 import { facetNames, type ReportSearchAnswer } from '#shared/reports/report-view';
-import { readReportNumber } from '#shared/reports/report-number';
+import { parseReportNumber } from '#shared/reports/report-number';
 import type { WatchFilter } from '#shared/watches/watch-filter';
 import type { Transaction } from '../db/database';
 import { InvalidInput } from '../errors';
@@ -26,9 +26,9 @@ export function createReportSearchService(unfilteredTotals: UnfilteredTotals) {
   return {
     /** Numbers first, then words and filters; a slip of spelling is mended where nothing fits. */
     async search(trx: Transaction, query: SearchQuery): Promise<ReportSearchAnswer> {
-      const read = readReportNumber(query.text ?? '');
-      if (read.kind === 'mistyped') return { ...nothing, numberMistyped: true };
-      if (read.kind === 'number') return byNumber(trx, read.number);
+      const { number, problem } = parseReportNumber(query.text ?? '');
+      if (number !== undefined) return byNumber(trx, number);
+      if (problem !== 'not_a_number') return { ...nothing, numberMistyped: true };
       const filter = filterOf(query);
       const found = await searchPage(trx, filter, query);
       if (found.items.length || query.after || query.exact || !filter.text) return found;

@@ -1,6 +1,6 @@
 import type { Page } from '#shared/paging';
 import type { MyReport, MyReportContent, ReportView } from '#shared/reports/report-view';
-import { readReportNumber } from '#shared/reports/report-number';
+import { parseReportNumber } from '#shared/reports/report-number';
 import type { Transaction } from '../db/database';
 import { InvalidInput, NotFound, ProblemError } from '../errors';
 import { z } from '../http/openapi-zod';
@@ -54,10 +54,10 @@ export function createReportsService() {
 
 /** Throws 404 `report_number_mistyped` where the check character does not fit. */
 function getNumber(typed: string): string {
-  const read = readReportNumber(typed);
-  if (read.kind === 'number') return read.number;
-  if (read.kind === 'mistyped') throw new ProblemError(404, 'report_number_mistyped');
-  throw new NotFound();
+  const { number, problem } = parseReportNumber(typed);
+  if (number !== undefined) return number;
+  throw problem === 'not_a_number' ? new NotFound()
+    : new ProblemError(404, 'report_number_mistyped');
 }
 
 function readAfter(text: string | undefined): { filedAt: string; id: string } | undefined {
