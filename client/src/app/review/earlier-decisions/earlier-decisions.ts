@@ -24,12 +24,12 @@ import { decisionWords } from '../review-words';
           <p class="tn-meta">
             <ng-container i18n>version {{ row.version }}</ng-container> · {{ row.club }}
             @if (row.mine) {
-              (<ng-container i18n>you</ng-container>)
+              &ngsp;(<ng-container i18n>you</ng-container>)
             }
-            · {{ row.madeAt | tnWhen: 'date-time' }}
+            &ngsp;· {{ row.madeAt | tnWhen: 'date-time' }}
           </p>
           @if (row.basis) {
-            <p class="tn-meta"><ng-container i18n>from</ng-container> {{ row.basis }}</p>
+            <p class="tn-meta"><ng-container i18n>from {{ row.basis }}</ng-container></p>
           }
           <p class="reason">{{ row.reason }}</p>
         </li>
