@@ -65,7 +65,8 @@ async function install(debianPackage, name) {
     await aptGet(...values);
   } catch (error) {
     throw new PlainError(`${name} could not be installed: Debian's package servers did not answer `
-      + `as they should. Check the network, then start again.\n\n${error.message}`);
+      + `as they should. Check the network, then start again.\n\n${
+        error.message.split('\n').slice(-4).join('\n')}`);
   } finally {
     allowMainCluster();
   }
