@@ -1,6 +1,6 @@
 import { audiences, disclosures } from '#shared/access/audience';
 import { photoSides } from '#shared/reports/photo';
-import { channels, componentKinds, conditions, judgements, metals, photoLicences, pieceKinds,
+import { channels, componentKinds, conditions, metals, photoLicences, pieceKinds,
   quantities, reportStates, whereaboutsKinds, type DraftContent, type DraftSave, type DraftView,
   type FiledReport, type ReportContent } from '#shared/reports/report-content';
 import type { MyReportContent } from '#shared/reports/report-view';

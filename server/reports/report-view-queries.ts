@@ -149,8 +149,9 @@ function toView(row: ViewRow, wanted: WantedVersion): ReportView {
     presentedAs: { coinType: row.type_slug, kind: piece.kind, metal: piece.metal,
       description: piece.description, year: piece.year, mintMark: piece.mintMark },
     coinType: row.type_slug === null ? null : { slug: row.type_slug, name: row.type_name ?? '',
-      issuer: row.type_issuer ?? '', diameterMillimetres: row.type_diameter && nominalDiameterMillimetres({
-        diameter: row.type_diameter, variants: [], dateTable: null, notes: [] }) },
+      issuer: row.type_issuer ?? '',
+      diameterMillimetres: row.type_diameter && nominalDiameterMillimetres(
+        { diameter: row.type_diameter, variants: [], dateTable: null, notes: [] }) },
     components: row.components ?? [],
     pieceCount: row.piece_count,
     condition: row.condition,

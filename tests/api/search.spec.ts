@@ -5,7 +5,8 @@ import type { ReportSearchAnswer, SearchSuggestion } from '#shared/reports/repor
 import { searchQuery } from '#server/reports/report-search-schemas';
 import { createReportSearchService } from '#server/reports/report-search-service';
 import { createUnfilteredTotals } from '#server/reports/search-totals';
-import { addClub, addMember, type TestClub, type TestPerson } from '#tests/support/factories/people';
+import { addClub, addMember, type TestClub,
+  type TestPerson } from '#tests/support/factories/people';
 import { fileReport, publishReport, reportContent } from '#tests/support/factories/reports';
 import { startTestApp, type TestApp } from '#tests/support/test-app';
 import type { TestClient } from '#tests/support/test-client';
@@ -120,7 +121,7 @@ describe('search', () => {
     expect(facet(await search('', author), 'tell')).toMatchObject({ [hidden.tell_id]: 1 });
   });
 
-  it('mends a slip of spelling where the word finds nothing, and leaves it where asked', async () => {
+  it('mends a slip of spelling where a word finds nothing, unless told not to', async () => {
     const mended = await search('text=quilhaven');
     expect(mended.mended).toEqual({ from: 'quilhaven', to: 'quillhaven' });
     expect(mended.items).toHaveLength(2);

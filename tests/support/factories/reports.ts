@@ -1,7 +1,8 @@
 import { randomUUID } from 'node:crypto';
 import type { Knex } from 'knex';
 import type { Audience } from '#shared/access/audience';
-import type { Confidence, FiledReport, PinPlace, ReportContent } from '#shared/reports/report-content';
+import type { Confidence, FiledReport, PinPlace,
+  ReportContent } from '#shared/reports/report-content';
 import type { TestClient } from '../test-client';
 import { addClub, addMember, type TestClub } from './people';
 
@@ -60,7 +61,8 @@ export async function uploadPhoto(
 export async function publishReport(owner: Knex, number: string, publication: {
   readonly audience?: Audience; readonly confidence?: Confidence; readonly at?: string;
 } = {}): Promise<void> {
-  const { audience = 'clubs', confidence = 'probable', at = new Date().toISOString() } = publication;
+  const { audience = 'clubs', confidence = 'probable' } = publication;
+  const at = publication.at ?? new Date().toISOString();
   const report = await owner('report').where({ number }).first('id', 'current_version');
   const version = report.current_version;
   await owner.transaction(async (trx) => {
