@@ -20,6 +20,13 @@ export class Stopping {
         void this.end(codeOnSignal);
       });
     }
+    // npm that is killed outright passes no signal on; what it started would go on unseen.
+    const parent = process.ppid;
+    if (process.env.npm_lifecycle_event) {
+      setInterval(() => {
+        if (process.ppid !== parent) void this.end(codeOnSignal);
+      }, 1_000).unref();
+    }
   }
 
   get isUnderWay() {
