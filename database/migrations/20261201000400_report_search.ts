@@ -96,8 +96,10 @@ create function readers_of_report(wanted_report uuid, people uuid[]) returns set
 $$;
 
 -- Renewed by the application in the transaction that publishes, widens, corrects or retracts.
+-- Its plans are kept by the connection: made while tables are empty they would read them whole
+-- ever after, hence the setting.
 create function renew_report_search(wanted_report uuid) returns void language plpgsql
-  security definer set search_path = public, pg_temp as $$
+  security definer set search_path = public, pg_temp set enable_seqscan = off as $$
 begin
   delete from report_search where report_id = wanted_report;
   insert into report_search
