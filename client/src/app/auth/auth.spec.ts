@@ -74,6 +74,17 @@ describe('signing in and the guards', () => {
     expect(await visit(path, person)).toBe(text);
   });
 
+  it('opens the page asked for in the same breath as the sign-in', async () => {
+    const harness = await RouterTestingHarness.create();
+    const session = TestBed.inject(SessionStore);
+    session.keep({ person: null });
+    await harness.navigateByUrl('/desk');
+    expect(harness.routeNativeElement?.textContent).toBe('sign in here');
+    session.keep({ person: moderator });
+    await harness.navigateByUrl('/desk');
+    expect(harness.routeNativeElement?.textContent).toBe('the screen');
+  });
+
   it('knows the clubs of a role', () => {
     const session = TestBed.inject(SessionStore);
     session.keep({ person: moderator });

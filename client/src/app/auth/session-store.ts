@@ -1,7 +1,7 @@
 import { HttpClient } from '@angular/common/http';
 import { Injectable, computed, inject, signal } from '@angular/core';
 import { toObservable } from '@angular/core/rxjs-interop';
-import { Observable, filter, first, map, tap } from 'rxjs';
+import { Observable, filter, first, map, of, tap } from 'rxjs';
 import { ClubRole, Role } from '#shared/access/audience';
 import { ClubSummary, SessionView, SignInRequest, SignedInPerson } from '#shared/accounts/session';
 
@@ -33,6 +33,10 @@ export class SessionStore {
 
   /** Emits once, as soon as it is known who is signed in. */
   whenKnown(): Observable<SignedInPerson | null> {
+    // The observable follows the signal by an effect: just after signing in it still says "nobody",
+    // and the guard of the page asked for would lead back to the sign-in.
+    const known = this.known();
+    if (known !== undefined) return of(known);
     return this.known$.pipe(
       filter((person) => person !== undefined),
       first(),
