@@ -73,6 +73,10 @@ export class DraftList {
     });
   }
 
+  protected removalWords(draft: DraftView): string {
+    return $localize`Remove the draft ${this.titleOf(draft)}:title:`;
+  }
+
   protected titleOf(draft: DraftView): string {
     const { presentedAs } = draft.content;
     const name = presentedAs?.description || (presentedAs?.coinType ?? '').replaceAll('-', ' ');
