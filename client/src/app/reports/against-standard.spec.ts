@@ -39,7 +39,7 @@ describe('compareWithStandard', () => {
   it('answers nothing without limits, and cannot tell between two variants', () => {
     expect(answer(measured(20, { quantity: 'diameter', unit: 'mm' }))).toBeUndefined();
     const light = { ...weight, variant: 'from 1910', low: 15, high: 15.2 };
-    expect(compareWithStandard(measured(16.8), { standard: [weight, light] }, 'little_worn')?.answer)
-      .toBe('cannot_tell');
+    const both = { standard: [weight, light] };
+    expect(compareWithStandard(measured(16.8), both, 'little_worn')?.answer).toBe('cannot_tell');
   });
 });

@@ -47,6 +47,7 @@ export function compareWithStandard(
   const value = measurement.value * conversion.factor;
   const uncertainty = ((measurement.resolution ?? 0) / 2) * conversion.factor;
   const limits = { low: standard.low, high: standard.high };
+  const worn = weightLost(measurement, condition);
   return {
     quantity: measurement.quantity,
     value,
@@ -56,7 +57,7 @@ export function compareWithStandard(
     ...limits,
     answer: isAmbiguous(type.standard, standard)
       ? 'cannot_tell'
-      : answerOf(value - uncertainty, value + uncertainty, limits, weightLost(measurement, condition)),
+      : answerOf(value - uncertainty, value + uncertainty, limits, worn),
     variant: standard.variant,
   };
 }

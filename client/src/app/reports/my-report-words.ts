@@ -38,7 +38,7 @@ photos may decide it: file a new report with them.`;
     case 'retracted':
       return $localize`It was retracted; its page and number stay, with the reason.`;
     case 'merged':
-      return $localize`It was joined with another report of the same piece; its number leads there.`;
+      return $localize`It was joined with another report of the piece; its number leads there.`;
     case 'withheld':
       return $localize`It is withheld on legal grounds; its number stays.`;
   }

@@ -21,12 +21,14 @@ export const coinTypeRoutes: Routes = [
     path: '',
     title: $localize`Coin types`,
     providers: [formDefaults],
-    loadComponent: () => import('./coin-type-list/coin-type-list').then((file) => file.CoinTypeList),
+    loadComponent: () =>
+      import('./coin-type-list/coin-type-list').then((file) => file.CoinTypeList),
   },
   {
     path: ':slug',
     title: $localize`Coin type`,
-    loadComponent: () => import('./coin-type-page/coin-type-page').then((file) => file.CoinTypePage),
+    loadComponent: () =>
+      import('./coin-type-page/coin-type-page').then((file) => file.CoinTypePage),
   },
 ];
 

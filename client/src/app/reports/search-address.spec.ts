@@ -1,6 +1,8 @@
 import { convertToParamMap } from '@angular/router';
 
-import { addressOfSearch, isUnfiltered, searchOfAddress, withFacet, without } from './search-address';
+import {
+  addressOfSearch, isUnfiltered, searchOfAddress, withFacet, without,
+} from './search-address';
 
 describe('the address of a search', () => {
   it('holds words, facets and years, and comes back the same', () => {

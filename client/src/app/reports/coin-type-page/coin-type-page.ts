@@ -98,7 +98,8 @@ export class CoinTypePage {
     for (const { country, status, source, sourceKind } of this.type()?.legalStatus ?? []) {
       const from = `${source} · ${sourceKindWords(sourceKind)}`;
       const key = `${status} ${from}`;
-      const line = lines.get(key) ?? { status: legalStatusWords(status), source: from, countries: [] };
+      const words = legalStatusWords(status);
+      const line = lines.get(key) ?? { status: words, source: from, countries: [] };
       line.countries.push(countryName(country, this.locale));
       lines.set(key, line);
     }

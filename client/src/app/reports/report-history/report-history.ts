@@ -23,7 +23,8 @@ import { WhenPipe } from '../../ui/when-pipe';
             · <ng-container i18n>published {{ entry.from | tnWhen }}</ng-container>
           </span>
           <span class="tn-meta">
-            {{ entry.confidenceText }} · <ng-container i18n>for {{ entry.audienceText }}</ng-container>
+            {{ entry.confidenceText }} ·
+            <ng-container i18n>for {{ entry.audienceText }}</ng-container>
             @if (entry.to) {
               · {{ entry.endText }} {{ entry.to | tnWhen }}
             }

@@ -1,4 +1,6 @@
-import { ChangeDetectionStrategy, Component, LOCALE_ID, computed, inject, input } from '@angular/core';
+import {
+  ChangeDetectionStrategy, Component, LOCALE_ID, computed, inject, input,
+} from '@angular/core';
 import { RouterLink } from '@angular/router';
 import { CoinTypeView } from '#shared/catalogue/coin-type-view';
 import { MeasurementView, ReportView } from '#shared/reports/report-view';
