@@ -50,9 +50,7 @@ test('a member files a report: photos from a camera, a pin set by keyboard', asy
   await page.getByRole('button', { name: 'Start a report' }).click();
 
   await page.getByLabel('Presented as').fill('Quillhaven crown');
-  await expect(page.getByRole('option', { name: /crown/i }).first()).toBeVisible();
-  await page.keyboard.press('ArrowDown');
-  await page.keyboard.press('Enter');
+  await takeFirstOption(page, /Quillhaven crown/);
   await page.getByLabel('Date on the piece').fill('1891');
   await page.getByRole('button', { name: /^Next/ }).click();
 
@@ -197,9 +195,7 @@ test('what is served carries no position and stands upright', async ({ browser, 
 async function setPinByKeyboard(page: Page): Promise<void> {
   const search = page.getByLabel('Add a tell');
   await search.fill('pit');
-  await expect(page.getByRole('listbox').getByRole('option').first()).toBeVisible();
-  await page.keyboard.press('ArrowDown');
-  await page.keyboard.press('Enter');
+  await takeFirstOption(page, /pit/i);
   await page.getByRole('button', { name: 'Add a pin without tapping' }).focus();
   await page.keyboard.press('Enter');
   const clock = page.getByLabel('clock', { exact: true });
@@ -207,6 +203,13 @@ async function setPinByKeyboard(page: Page): Promise<void> {
   await page.getByRole('button', { name: /^Pin 1/ }).focus();
   for (let press = 0; press < 5; press += 1) await page.keyboard.press('ArrowRight');
   await expect(clock).not.toHaveValue(before);
+}
+
+/** By keyboard, once the answer to what was typed has come. */
+async function takeFirstOption(page: Page, words: RegExp): Promise<void> {
+  await expect(page.getByRole('listbox').getByRole('option').first()).toContainText(words);
+  await page.keyboard.press('ArrowDown');
+  await page.keyboard.press('Enter');
 }
 
 async function pageOf(
