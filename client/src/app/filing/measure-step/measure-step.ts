@@ -80,9 +80,12 @@ export class MeasureStep {
   private readonly store = inject(DraftStore);
   private readonly builder = inject(NonNullableFormBuilder);
 
-  protected readonly measurables = measurables;
   protected readonly words = quantityWords;
-  protected readonly rows = measurables.map((measurable) => this.rowOf(measurable));
+  protected readonly entries = measurables.map((measurable) => ({
+    ...measurable,
+    row: this.rowOf(measurable),
+  }));
+  private readonly rows = this.entries.map(({ row }) => row);
   protected readonly magnetic = this.builder.control(this.magneticAtStart());
   private readonly form = this.builder.group({
     rows: this.builder.array(this.rows),

@@ -1,5 +1,4 @@
 import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
-import { MatButton } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
 import {
@@ -29,7 +28,6 @@ import { TellEditor } from '../tell-editor/tell-editor';
   changeDetection: ChangeDetectionStrategy.OnPush,
   imports: [
     Disc,
-    MatButton,
     MatFormFieldModule,
     MatInput,
     PhotoFrame,
