@@ -24,7 +24,7 @@ import { createFilingService } from './reports/filing-service';
 import { createReportSearchService } from './reports/report-search-service';
 import { reportsRoutes } from './reports/reports-routes';
 import { createReportsService } from './reports/reports-service';
-import { createUnfilteredTotals } from './reports/search-totals';
+import { createKeptTotals } from './reports/search-totals';
 
 export interface Parts {
   readonly config: Config;
@@ -51,7 +51,7 @@ export async function composeRoutes(
   });
   const reports = createReportsService();
   const filing = createFilingService(config, () => new Date());
-  const search = createReportSearchService(createUnfilteredTotals(Date.now));
+  const search = createReportSearchService(createKeptTotals(Date.now));
   const queue = await startJobQueue(config.databaseUrl, logger, 'enqueue');
   return {
     routes: [

@@ -401,31 +401,34 @@ create table notice (
 );
 create index notice_person_index on notice (person_id, created_at desc, id);
 
--- Sight. One function says who sees a report; every child row asks through the report's policy.
-create function reader_clubs_of(wanted_report uuid) returns uuid[] language sql stable
+-- Sight. One function says who sees a report; every child row asks by its version.
+create function reader_clubs_of(wanted_report uuid) returns uuid[] language plpgsql stable
   security definer set search_path = public, pg_temp as $$
-  select coalesce(array_agg(rc.club_id), '{}') from report_reader_club rc
-   where rc.report_id = wanted_report
-$$;
+begin
+  return (select coalesce(array_agg(rc.club_id), '{}') from report_reader_club rc
+    where rc.report_id = wanted_report);
+end $$;
 create function sees_as_published(published_audience text, club_id uuid, report_id uuid,
-  embargo_until timestamptz, clubs uuid[]) returns boolean language sql stable as $$
-  select published_audience is not null
+  embargo_until timestamptz, clubs uuid[]) returns boolean language plpgsql stable as $$
+begin
+  return published_audience is not null
      and (embargo_until is null or embargo_until <= now())
      and case published_audience
        when 'public' then true
        when 'clubs' then cardinality(clubs) > 0
        when 'club' then club_id = any (clubs)
-       else club_id = any (clubs) or reader_clubs_of(report_id) && clubs end
-$$;
+       else club_id = any (clubs) or reader_clubs_of(report_id) && clubs end;
+end $$;
 -- A moderator reviews what is meant for their club: their own club's reports, and those whose
 -- asked audience reaches them.
 create function reviews_report(audience text, club_id uuid, report_id uuid, state text,
-  clubs uuid[]) returns boolean language sql stable as $$
-  select cardinality(clubs) > 0 and state not in ('withdrawn') and case audience
+  clubs uuid[]) returns boolean language plpgsql stable as $$
+begin
+  return cardinality(clubs) > 0 and state not in ('withdrawn') and case audience
     when 'club' then club_id = any (clubs)
     when 'named_clubs' then club_id = any (clubs) or reader_clubs_of(report_id) && clubs
-    else true end
-$$;
+    else true end;
+end $$;
 
 alter table report enable row level security;
 create policy report_seen on report for select to touchneedle_app using (
@@ -443,55 +446,77 @@ create policy report_changed on report for update to touchneedle_app using (
   with check (true);
 
 -- True where the actor sees unpublished versions and moderators' evidence of this report.
-create function sees_evidence(wanted_report uuid) returns boolean language sql stable
+create function sees_evidence(wanted_report uuid) returns boolean language plpgsql stable
   security definer set search_path = public, pg_temp as $$
-  select is_system_actor() or exists (select from report r where r.id = wanted_report
-    and (r.author_id = current_actor()
-      or reviews_report(r.audience, r.club_id, r.id, r.state, actor_clubs_as('moderator'))))
-$$;
-create function in_reporters_club(wanted_report uuid) returns boolean language sql stable
+declare r record;
+begin
+  if is_system_actor() then return true; end if;
+  if current_actor() is null then return false; end if;
+  select author_id, audience, club_id, state into r from report where id = wanted_report;
+  return found and (r.author_id = current_actor()
+    or reviews_report(r.audience, r.club_id, wanted_report, r.state,
+         actor_clubs_as('moderator')));
+end $$;
+create function in_reporters_club(wanted_report uuid) returns boolean language plpgsql stable
   security definer set search_path = public, pg_temp as $$
-  select exists (select from report r where r.id = wanted_report
-    and r.club_id = any (actor_clubs()))
-$$;
--- The versions of a report that the actor may read: published ones whose publication reached
--- the actor's circle, and every one for author and reviewers.
+begin
+  return exists (select from report r where r.id = wanted_report
+    and r.club_id = any (actor_clubs()));
+end $$;
+-- The versions of a report that the actor may read: of a report that they may see, the published
+-- ones whose publication reached the actor's circle, and every one for author and reviewers.
 create function sees_version(wanted_report uuid, wanted_version integer) returns boolean
-  language sql stable security definer set search_path = public, pg_temp as $$
-  select exists (select from publication p join report r on r.id = p.report_id
-    where p.report_id = wanted_report and p.version = wanted_version
-      and (sees_as_published(p.audience, r.club_id, r.id, r.embargo_until, actor_clubs())
-           or actor_is_registrar()))
-    or sees_evidence(wanted_report)
-$$;
+  language plpgsql stable security definer set search_path = public, pg_temp as $$
+declare r record; clubs uuid[];
+begin
+  if is_system_actor() then return true; end if;
+  select author_id, audience, published_audience, club_id, embargo_until, state into r
+    from report where id = wanted_report;
+  if not found then return false; end if;
+  if r.published_audience is not null then
+    if actor_is_registrar() then
+      if exists (select from publication p where p.report_id = wanted_report
+                   and p.version = wanted_version) then return true; end if;
+    else
+      clubs := actor_clubs();
+      if sees_as_published(r.published_audience, r.club_id, wanted_report, r.embargo_until, clubs)
+         and exists (select from publication p
+           where p.report_id = wanted_report and p.version = wanted_version
+             and sees_as_published(p.audience, r.club_id, wanted_report, r.embargo_until, clubs))
+      then return true; end if;
+    end if;
+  end if;
+  return current_actor() is not null and (r.author_id = current_actor()
+    or reviews_report(r.audience, r.club_id, wanted_report, r.state,
+         actor_clubs_as('moderator')));
+end $$;
 create function sees_disclosure(disclosure text, wanted_report uuid) returns boolean
-  language sql stable security definer set search_path = public, pg_temp as $$
-  select case disclosure when 'public' then true
+  language plpgsql stable security definer set search_path = public, pg_temp as $$
+begin
+  return case disclosure when 'public' then true
     when 'clubs' then cardinality(actor_clubs()) > 0 or sees_evidence(wanted_report)
-    else sees_evidence(wanted_report) end
-$$;
+    else sees_evidence(wanted_report) end;
+end $$;
 
 ${['report_version', 'component', 'report_photo', 'measurement', 'surfacing']
   .map((table) => `
 alter table ${table} enable row level security;
-create policy ${table}_seen on ${table} for select to touchneedle_app using (
-  exists (select from report r where r.id = ${table}.report_id)
-  and sees_version(${table}.report_id, ${table}.version));
+create policy ${table}_seen on ${table} for select to touchneedle_app
+  using (sees_version(${table}.report_id, ${table}.version));
 create policy ${table}_added on ${table} for insert to touchneedle_app
   with check (sees_evidence(${table}.report_id));
 `).join('')}
 ${['report_tell', 'pin'].map((table) => `
 alter table ${table} enable row level security;
 create policy ${table}_seen on ${table} for select to touchneedle_app using (
-  exists (select from report r where r.id = ${table}.report_id)
-  and sees_version(${table}.report_id, ${table}.version)
+  sees_version(${table}.report_id, ${table}.version)
   and sees_disclosure(${table}.disclosure, ${table}.report_id));
 create policy ${table}_added on ${table} for insert to touchneedle_app
   with check (sees_evidence(${table}.report_id));
 `).join('')}
 alter table surfacing_detail enable row level security;
 create policy surfacing_detail_seen on surfacing_detail for select to touchneedle_app using (
-  exists (select from report r where r.id = report_id) and sees_version(report_id, version)
+  sees_version(report_id, version)
   and (in_reporters_club(report_id) or sees_evidence(report_id)));
 create policy surfacing_detail_added on surfacing_detail for insert to touchneedle_app
   with check (sees_evidence(report_id));
@@ -548,8 +573,8 @@ create policy decision_undone on decision for update to touchneedle_app
   using (moderator_id = (select current_actor())) with check (true);
 
 alter table publication enable row level security;
-create policy publication_seen on publication for select to touchneedle_app using (
-  exists (select from report r where r.id = report_id) and sees_version(report_id, version));
+create policy publication_seen on publication for select to touchneedle_app
+  using (sees_version(report_id, version));
 create policy publication_added on publication for insert to touchneedle_app
   with check (sees_evidence(report_id));
 create policy publication_changed on publication for update to touchneedle_app
@@ -569,17 +594,19 @@ create policy notice_read on notice for update to touchneedle_app
 create policy notice_added on notice for insert to touchneedle_app with check (true);
 
 -- The reporter's name: for the moderators who decide, and for readers where the reporter chose.
-create function reporter_name(wanted_report uuid) returns text language sql stable
+create function reporter_name(wanted_report uuid) returns text language plpgsql stable
   security definer set search_path = public, pg_temp as $$
-  select p.display_name from report r join person p on p.id = r.author_id
-   where r.id = wanted_report and (r.author_named or sees_evidence(wanted_report))
-$$;
+begin
+  return (select p.display_name from report r join person p on p.id = r.author_id
+   where r.id = wanted_report and (r.author_named or sees_evidence(wanted_report)));
+end $$;
 
 -- True where tells or pins of this version exist that the actor may not see; not which, nor how
 -- many.
 create function holds_back_tells(wanted_report uuid, wanted_version integer) returns boolean
-  language sql stable security definer set search_path = public, pg_temp as $$
-  select exists (select from report_tell rt join tell t on t.id = rt.tell_id
+  language plpgsql stable security definer set search_path = public, pg_temp as $$
+begin
+  return exists (select from report_tell rt join tell t on t.id = rt.tell_id
       where rt.report_id = wanted_report and rt.version = wanted_version
         and not (sees_disclosure(rt.disclosure, rt.report_id)
           and (t.disclosure = 'public'
@@ -587,19 +614,20 @@ create function holds_back_tells(wanted_report uuid, wanted_version integer) ret
             or cardinality(actor_clubs_as('moderator')) > 0)))
     or exists (select from pin p
       where p.report_id = wanted_report and p.version = wanted_version
-        and not sees_disclosure(p.disclosure, p.report_id))
-$$;
+        and not sees_disclosure(p.disclosure, p.report_id));
+end $$;
 
 -- Why a published report was retracted: shown to whoever may see the report.
-create function retraction_reason(wanted_report uuid) returns text language sql stable
+create function retraction_reason(wanted_report uuid) returns text language plpgsql stable
   security definer set search_path = public, pg_temp as $$
-  select d.reason from decision d join report r on r.id = d.report_id
+begin
+  return (select d.reason from decision d join report r on r.id = d.report_id
    where d.report_id = wanted_report and d.kind = 'retract' and d.undone_at is null
      and r.state = 'retracted'
      and (sees_as_published(r.published_audience, r.club_id, r.id, r.embargo_until, actor_clubs())
           or sees_evidence(wanted_report))
-   order by d.made_at desc limit 1
-$$;
+   order by d.made_at desc limit 1);
+end $$;
 
 -- For the worker: photos that no report has and no draft has had for a while, and removed ones
 -- whose objects may still lie in the store. Drafts are hidden from the worker itself.

@@ -49,7 +49,8 @@ export function toCard(row: CardRow): ReportCard {
     publishedAt: row.published_at.toISOString(),
     audience: row.published_audience,
     pieceCount: row.card.pieceCount,
-    photos: row.card.photos.slice(0, 2),
+    photos: (['obverse', 'reverse'] as const)
+      .flatMap((side) => row.card.photos.find((photo) => photo.side === side) ?? []),
   };
 }
 

@@ -1,9 +1,9 @@
 import type { Knex } from 'knex';
-import type { PlacedPhotoView } from '#shared/reports/photo';
-import { facetNames, type FacetCount, type FacetName, type NamedTell,
+import { facetNames, type FacetCount, type FacetName,
   type ReportCard } from '#shared/reports/report-view';
 import type { WatchFilter } from '#shared/watches/watch-filter';
 import type { Transaction } from '../db/database';
+import { cardColumns, toCard, type CardRow } from './report-card-queries';
 import type { SearchCursor } from './report-search-schemas';
 
 export type FacetCounts = Readonly<Record<FacetName, readonly FacetCount[]>>;
@@ -58,23 +58,6 @@ function visibleReports(trx: Transaction): Knex.QueryBuilder {
   return trx.from({ s: 'visible_report_search' });
 }
 
-interface CardRow {
-  readonly report_id: string; readonly cursor_at: string; readonly number: string;
-  readonly title: string; readonly coin_type_slug: string | null;
-  readonly coin_type_name: string | null; readonly kind: ReportCard['kind'];
-  readonly metal: string | null; readonly year: number | null;
-  readonly mint_mark: string | null; readonly confidence: ReportCard['confidence'];
-  readonly channel: ReportCard['channel']; readonly country: string; readonly region: string;
-  readonly surfaced_month: string; readonly published_at: Date;
-  readonly published_audience: ReportCard['audience'];
-  readonly card: {
-    readonly photos: readonly Omit<PlacedPhotoView, 'caption'>[];
-    readonly tells: readonly NamedTell[];
-    readonly methodId: string | null;
-    readonly pieceCount: number;
-  };
-}
-
 /** A page of cards, the newest publication first, with the place of each for paging by key. */
 export async function listCards(trx: Transaction, filter: WatchFilter, page: {
   readonly after?: SearchCursor | undefined; readonly limit: number;
@@ -87,7 +70,7 @@ export async function listCards(trx: Transaction, filter: WatchFilter, page: {
     void query.whereRaw('(s.published_at, s.report_id) < (?::timestamptz, ?::uuid)',
       [page.after.publishedAt, page.after.reportId]);
   }
-  const rows: CardRow[] = await query;
+  const rows: (CardRow & { readonly cursor_at: string })[] = await query;
   return rows.map((row) => ({
     card: toCard(row), cursor: { publishedAt: row.cursor_at, reportId: row.report_id },
   }));
@@ -100,29 +83,10 @@ export async function findCard(trx: Transaction, number: string): Promise<Report
 }
 
 function selectCards(trx: Transaction): Knex.QueryBuilder {
-  return visibleReports(trx).leftJoin('coin_type', 'coin_type.id', 's.coin_type_id')
-    .select('s.report_id', 's.number', 's.title', 's.coin_type_slug',
-      'coin_type.name as coin_type_name', 's.kind', 's.metal', 's.year', 's.mint_mark',
-      's.confidence', 's.channel', 's.country', 's.region', 's.surfaced_month',
-      's.published_at', 's.published_audience', 's.card',
-      // With microseconds, which a Date would lose, and rows between them with it.
-      trx.raw(`to_char(s.published_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')
-        as cursor_at`));
-}
-
-function toCard(row: CardRow): ReportCard {
-  const { photos, tells, methodId, pieceCount } = row.card;
-  return {
-    number: row.number, title: row.title,
-    coinType: row.coin_type_slug === null ? null
-      : { slug: row.coin_type_slug, name: row.coin_type_name ?? '' },
-    kind: row.kind, metal: row.metal, year: row.year, mintMark: row.mint_mark,
-    confidence: row.confidence, methodId, tells, channel: row.channel, country: row.country,
-    region: row.region, surfacedMonth: row.surfaced_month.slice(0, 7),
-    publishedAt: row.published_at.toISOString(), audience: row.published_audience, pieceCount,
-    photos: (['obverse', 'reverse'] as const)
-      .flatMap((side) => photos.find((photo) => photo.side === side) ?? []),
-  };
+  return visibleReports(trx).select(...cardColumns,
+    // With microseconds, which a Date would lose, and rows between them with it.
+    trx.raw(`to_char(s.published_at at time zone 'UTC', 'YYYY-MM-DD"T"HH24:MI:SS.US"Z"')
+      as cursor_at`));
 }
 
 /** How many reports the filter finds for the actor. */

@@ -1,13 +1,12 @@
-import { facetNames, type ReportSearchAnswer } from '#shared/reports/report-view';
+import type { ReportSearchAnswer } from '#shared/reports/report-view';
 import { parseReportNumber } from '#shared/reports/report-number';
 import type { WatchFilter } from '#shared/watches/watch-filter';
 import type { Transaction } from '../db/database';
 import { InvalidInput } from '../errors';
-import { countFacets, findCard, listCards, narrows, type FacetCounts,
-  type SearchTotals } from './report-search-queries';
+import { findCard, listCards, type FacetCounts } from './report-search-queries';
 import { filterOf, readCursor, writeCursor, type SearchQuery } from './report-search-schemas';
 import { mendText } from './search-words-queries';
-import type { UnfilteredTotals } from './search-totals';
+import type { KeptTotals } from './search-totals';
 
 /** Hits are counted up to here; the screen says "10,000+" above. */
 const countedAtMost = 10_000;
@@ -22,7 +21,7 @@ const nothing: ReportSearchAnswer = {
 
 export type ReportSearchService = ReturnType<typeof createReportSearchService>;
 
-export function createReportSearchService(unfilteredTotals: UnfilteredTotals) {
+export function createReportSearchService(kept: KeptTotals) {
   return {
     /** Numbers first, then words and filters; a slip of spelling is mended where nothing fits. */
     async search(trx: Transaction, query: SearchQuery): Promise<ReportSearchAnswer> {
@@ -49,7 +48,7 @@ export function createReportSearchService(unfilteredTotals: UnfilteredTotals) {
     const found = await listCards(trx, filter, { after, limit: query.limit + 1 });
     const page = found.slice(0, query.limit);
     const last = page.at(-1);
-    const totals = after ? undefined : await totalsOf(trx, filter);
+    const totals = after ? undefined : await kept.get(trx, filter);
     const count = after?.count ?? totals?.count ?? 0;
     return {
       ...nothing,
@@ -59,12 +58,6 @@ export function createReportSearchService(unfilteredTotals: UnfilteredTotals) {
       total: { count: Math.min(count, countedAtMost), more: count > countedAtMost },
       facets: totals?.facets ?? null,
     };
-  }
-
-  async function totalsOf(trx: Transaction, filter: WatchFilter): Promise<SearchTotals> {
-    if (!narrows(filter)) return unfilteredTotals.get(trx);
-    const isAlone = facetNames.some((name) => filter[name]?.length && !narrows(filter, name));
-    return countFacets(trx, filter, isAlone ? await unfilteredTotals.get(trx) : undefined);
   }
 }
 

@@ -4,7 +4,7 @@ import type { ReportContent } from '#shared/reports/report-content';
 import type { ReportSearchAnswer, SearchSuggestion } from '#shared/reports/report-view';
 import { searchQuery } from '#server/reports/report-search-schemas';
 import { createReportSearchService } from '#server/reports/report-search-service';
-import { createUnfilteredTotals } from '#server/reports/search-totals';
+import { createKeptTotals } from '#server/reports/search-totals';
 import { addClub, addMember, type TestClub,
   type TestPerson } from '#tests/support/factories/people';
 import { fileReport, publishReport, reportContent } from '#tests/support/factories/reports';
@@ -174,7 +174,7 @@ describe('search', () => {
     'makes the same number of statements for one row and for fifty (%s)', async (query) => {
       const count = async (limit: number): Promise<number> => {
         let statements = 0;
-        const service = createReportSearchService(createUnfilteredTotals(Date.now));
+        const service = createReportSearchService(createKeptTotals(Date.now));
         await app.database.asActor({ kind: 'visitor' }, async (trx) => {
           trx.on('query', () => { statements += 1; });
           await service.search(trx, searchQuery.parse({
