@@ -13,9 +13,6 @@ export interface SearchTotals {
   readonly facets: FacetCounts;
 }
 
-/** Values shown for one facet, the most frequent first. */
-const valuesPerFacet = 60;
-
 const columnOf: Readonly<Record<Exclude<FacetName, 'tell'>, string>> = {
   coinType: 's.coin_type_slug', metal: 's.metal', kind: 's.kind', channel: 's.channel',
   country: 's.country', confidence: 's.confidence',
@@ -96,25 +93,18 @@ export async function countReports(trx: Transaction, filter: WatchFilter): Promi
 }
 
 interface CountRow {
-  /** A facet, `own` and a facet, or `total`. */
-  readonly facet: string;
+  readonly facet: FacetName | 'total';
   readonly value: string | null;
   readonly count: number;
 }
 
-/**
- * The total and the counts of each facet, in one statement. A facet's own selection does not
- * narrow its own counts. Where a facet is the only thing that narrows, its counts are those of
- * `unfiltered`.
- */
-export async function countFacets(
-  trx: Transaction, filter: WatchFilter, unfiltered?: SearchTotals,
-): Promise<SearchTotals> {
-  const selected = facetNames.filter((name) => filter[name]?.length);
+/** The total and the counts of every facet among the hits, in one statement. */
+export async function countHits(trx: Transaction, filter: WatchFilter): Promise<SearchTotals> {
   const hits = applyFilter(visibleReports(trx).select('s.coin_type_slug', 's.metal', 's.kind',
     's.channel', 's.country', 's.confidence', 's.tells'), filter);
-  const parts: Knex.Raw[] = [trx.raw(
-    `select case when grouping(s.coin_type_slug) = 0 then 'coinType'
+  const { rows }: { rows: CountRow[] } = await trx.raw(
+    `with hit as materialized (?)
+     select case when grouping(s.coin_type_slug) = 0 then 'coinType'
          when grouping(s.metal) = 0 then 'metal' when grouping(s.kind) = 0 then 'kind'
          when grouping(s.channel) = 0 then 'channel' when grouping(s.country) = 0 then 'country'
          when grouping(s.confidence) = 0 then 'confidence' else 'total' end as facet,
@@ -124,37 +114,33 @@ export async function countFacets(
        (s.country), (s.confidence), ())
      union all
      select 'tell', t.tell, count(*) from hit s cross join unnest(s.tells) as t (tell)
-      group by t.tell`)];
-  const counted = selected.filter((name) => !unfiltered || narrows(filter, name));
-  for (const name of counted) parts.push(ownCounts(trx, filter, name));
-  const { rows }: { rows: CountRow[] } = await trx.raw(
-    `with hit as materialized (?) ${parts.map(() => '?').join(' union all ')}`,
-    [hits, ...parts]);
-  const facets = Object.fromEntries(facetNames.map((name) => [name,
-    selected.includes(name) && !counted.includes(name) ? unfiltered?.facets[name] ?? []
-      : topCounts(rows, selected.includes(name) ? `own ${name}` : name, filter[name] ?? [])]));
+      group by t.tell`, [hits]);
+  const countsOf = (facet: FacetName): FacetCount[] =>
+    byFrequency(rows.filter((row) => row.facet === facet));
   return {
     count: rows.find((row) => row.facet === 'total')?.count ?? 0,
-    // Object.fromEntries forgets that every facet has its entry.
-    facets: facets as Record<FacetName, FacetCount[]>,
+    facets: {
+      coinType: countsOf('coinType'), metal: countsOf('metal'), kind: countsOf('kind'),
+      tell: countsOf('tell'), channel: countsOf('channel'), country: countsOf('country'),
+      confidence: countsOf('confidence'),
+    },
   };
 }
 
-/** Counts of one facet under all the other conditions. */
-function ownCounts(trx: Transaction, filter: WatchFilter, name: FacetName): Knex.Raw {
+/** Counts of one facet among what the filter finds, its own selection left aside. */
+export async function countFacet(
+  trx: Transaction, filter: WatchFilter, name: FacetName,
+): Promise<readonly FacetCount[]> {
   const value = name === 'tell' ? 't.tell' : columnOf[name];
   const query = applyFilter(visibleReports(trx), filter, name);
   if (name === 'tell') void query.joinRaw('cross join unnest(s.tells) as t (tell)');
-  return trx.raw('?', [query.select(trx.raw('? as facet', [`own ${name}`]),
-    `${value} as value`).count({ count: '*' }).groupBy(value)]);
+  return byFrequency(await query.select(`${value} as value`).count({ count: '*' })
+    .groupBy(value));
 }
 
-/** The most frequent values; one that is selected is kept however rare. */
-function topCounts(
-  rows: readonly CountRow[], facet: string, chosen: readonly string[],
+function byFrequency(
+  rows: readonly { readonly value: string | null; readonly count: number }[],
 ): FacetCount[] {
-  const counts = rows.flatMap((row) => row.facet === facet && row.value !== null
-    ? [{ value: row.value, count: row.count }] : [])
+  return rows.flatMap(({ value, count }) => value === null ? [] : [{ value, count }])
     .sort((a, b) => b.count - a.count || (a.value < b.value ? -1 : 1));
-  return counts.filter((each, index) => index < valuesPerFacet || chosen.includes(each.value));
 }

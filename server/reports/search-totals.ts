@@ -1,21 +1,26 @@
-import { facetNames } from '#shared/reports/report-view';
+import { facetNames, type FacetCount, type FacetName } from '#shared/reports/report-view';
 import { filterToQuery, type WatchFilter } from '#shared/watches/watch-filter';
 import type { Transaction } from '../db/database';
-import { countFacets, narrows, type SearchTotals } from './report-search-queries';
+import { countFacet, countHits, narrows, type SearchTotals } from './report-search-queries';
 
 /** Embargoes end without an event, so totals are never older than this. */
 const longestMilliseconds = 60_000;
-const totalsKept = 1_000;
+const countsKept = 2_000;
+/** Values shown for one facet, the most frequent ones; one that is selected stays, however rare. */
+const valuesPerFacet = 60;
+
+export interface KeptTotals {
+  /**
+   * The total and the counts of each facet for what the filter finds for the actor. A facet's own
+   * selection does not narrow its own counts.
+   */
+  get(trx: Transaction, filter: WatchFilter): Promise<SearchTotals>;
+}
 
 interface Kept {
   readonly changedAt: string;
   readonly madeAt: number;
-  readonly totals: Promise<SearchTotals>;
-}
-
-export interface KeptTotals {
-  /** The total and the counts of each facet for what the filter finds for the actor. */
-  get(trx: Transaction, filter: WatchFilter): Promise<SearchTotals>;
+  readonly counts: Promise<SearchTotals>;
 }
 
 /**
@@ -30,29 +35,45 @@ export function createKeptTotals(now: () => number): KeptTotals {
     async get(trx, filter) {
       const { rows: [{ audience, changed_at: changedAt }] } = await trx.raw(
         'select audience, changed_at from search_audience()');
-      const find = (wanted: WatchFilter, count: () => Promise<SearchTotals>) => {
-        const key = `${audience}|${JSON.stringify(filterToQuery(wanted))}`;
+      const find = (what: string, wanted: WatchFilter, count: () => Promise<SearchTotals>) => {
+        const key = `${audience}|${what}|${JSON.stringify(filterToQuery(wanted))}`;
         const known = kept.get(key);
         return known && known.changedAt === changedAt
           && now() - known.madeAt < longestMilliseconds
-          ? known.totals : keep(key, changedAt, count());
+          ? known.counts : keep(key, changedAt, count());
       };
-      const countAll = (): Promise<SearchTotals> => find({}, () => countFacets(trx, {}));
-      if (!narrows(filter)) return countAll();
-      const isAlone = facetNames.some((name) => filter[name]?.length && !narrows(filter, name));
-      return find(filter, async () =>
-        countFacets(trx, filter, isAlone ? await countAll() : undefined));
+      const countsOf = async (name: FacetName): Promise<readonly FacetCount[]> => {
+        const others: WatchFilter = { ...filter, [name]: undefined };
+        const { facets } = narrows(others)
+          ? await find(name, others, async () => ({ count: 0, facets: { ...noCounts,
+            [name]: await countFacet(trx, others, name) } }))
+          : await find('hits', {}, () => countHits(trx, {}));
+        return facets[name];
+      };
+      const hits = await find('hits', filter, () => countHits(trx, filter));
+      const facets: Record<FacetName, readonly FacetCount[]> = { ...hits.facets };
+      // One after the other: a transaction has one connection.
+      for (const name of facetNames) {
+        const chosen = filter[name] ?? [];
+        if (chosen.length) facets[name] = await countsOf(name);
+        facets[name] = facets[name].filter((each, index) =>
+          index < valuesPerFacet || chosen.includes(each.value));
+      }
+      return { count: hits.count, facets };
     },
   };
 
   function keep(
-    key: string, changedAt: string, totals: Promise<SearchTotals>,
+    key: string, changedAt: string, counts: Promise<SearchTotals>,
   ): Promise<SearchTotals> {
     kept.delete(key);
-    kept.set(key, { changedAt, madeAt: now(), totals });
-    totals.catch(() => kept.delete(key));
+    kept.set(key, { changedAt, madeAt: now(), counts });
+    counts.catch(() => kept.delete(key));
     const oldest = kept.keys().next().value;
-    if (kept.size > totalsKept && oldest !== undefined) kept.delete(oldest);
-    return totals;
+    if (kept.size > countsKept && oldest !== undefined) kept.delete(oldest);
+    return counts;
   }
 }
+
+const noCounts: SearchTotals['facets'] = { coinType: [], metal: [], kind: [], tell: [],
+  channel: [], country: [], confidence: [] };
