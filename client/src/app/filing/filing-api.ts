@@ -1,16 +1,15 @@
-import { HttpClient, HttpEvent } from '@angular/common/http';
-import { Injectable, InjectionToken, inject } from '@angular/core';
+import { HttpClient, HttpContext, HttpEvent } from '@angular/common/http';
+import { Injectable, inject } from '@angular/core';
 import { Observable } from 'rxjs';
 import { ClubSummary } from '#shared/accounts/session';
 import { BlurArea, UploadedPhoto } from '#shared/reports/photo';
 import { DraftSave, DraftView, FiledReport, ReportContent } from '#shared/reports/report-content';
 import { MyReportContent } from '#shared/reports/report-view';
 
-/** Makes the ids of drafts, photos and pins, so that sending one twice makes one. */
-export const NEW_ID = new InjectionToken<() => string>('NEW_ID', {
-  providedIn: 'root',
-  factory: () => () => crypto.randomUUID(),
-});
+import { STAYS_WHEN_SIGNED_OUT } from '../http/interceptors';
+
+/** What is being written stays on screen where the session ends meanwhile. */
+const staying = { context: new HttpContext().set(STAYS_WHEN_SIGNED_OUT, true) };
 
 /** Drafts, photos and the filing itself. */
 @Injectable({ providedIn: 'root' })
@@ -26,7 +25,7 @@ export class FilingApi {
   }
 
   saveDraft(id: string, save: DraftSave): Observable<DraftView> {
-    return this.http.put<DraftView>(`/api/drafts/${id}`, save);
+    return this.http.put<DraftView>(`/api/drafts/${id}`, save, staying);
   }
 
   removeDraft(id: string): Observable<unknown> {
@@ -39,6 +38,7 @@ export class FilingApi {
     form.append('id', id);
     form.append('photo', file);
     return this.http.post<UploadedPhoto>('/api/photos', form, {
+      ...staying,
       reportProgress: true,
       observe: 'events',
     });
@@ -49,11 +49,11 @@ export class FilingApi {
   }
 
   blurPhoto(id: string, blurs: readonly BlurArea[]): Observable<UploadedPhoto> {
-    return this.http.put<UploadedPhoto>(`/api/photos/${id}/blurs`, { blurs });
+    return this.http.put<UploadedPhoto>(`/api/photos/${id}/blurs`, { blurs }, staying);
   }
 
   file(id: string, content: ReportContent): Observable<FiledReport> {
-    return this.http.post<FiledReport>('/api/reports', { id, content });
+    return this.http.post<FiledReport>('/api/reports', { id, content }, staying);
   }
 
   filedContent(number: string): Observable<MyReportContent> {
@@ -61,10 +61,8 @@ export class FilingApi {
   }
 
   change(number: string, rowVersion: number, content: ReportContent): Observable<FiledReport> {
-    return this.http.put<FiledReport>(`/api/my/reports/${number}/content`, {
-      rowVersion,
-      content,
-    });
+    return this.http.put<FiledReport>(`/api/my/reports/${number}/content`, { rowVersion, content },
+      staying);
   }
 
   clubs(): Observable<{ readonly items: readonly ClubSummary[] }> {

@@ -1,9 +1,8 @@
-import { Circle, PhotoSide } from '#shared/reports/photo';
+import { Circle, PhotoSide, UploadedPhoto } from '#shared/reports/photo';
 import {
   Channel,
   DraftContent,
   ReportContent,
-  ReportTell,
   Surfacing,
 } from '#shared/reports/report-content';
 
@@ -93,9 +92,18 @@ export function draftOf(content: FilingContent): DraftContent {
   return { ...content, surfacing: { ...surfacing, ...(channel ? { channel } : {}) } };
 }
 
-const paperMoneyWords =
-  /\b(bank ?notes?|paper money|treasury notes?|billets?|geldscheine?|banknoten?)\b/i;
+const paperMoneyWords = new RegExp(
+  [
+    /\b(bank ?notes?|paper ?money|treasury notes?|geldscheine?|banknoten?)\b/,
+    // "five-pound note", "10 dollar bill"; a medal of a man called Bill passes.
+    /\b(pounds?|dollars?|euros?|francs?|marks?|shillings?|roubles?|rupees?)[ -](notes?|bills?)\b/,
+  ]
+    .map(({ source }) => source)
+    .join('|'),
+  'i',
+);
 
+/** Whether words describe paper money, which is not taken. */
 export function speaksOfPaperMoney(description: string): boolean {
   return paperMoneyWords.test(description);
 }
@@ -118,6 +126,29 @@ export function missingIn(content: FilingContent): readonly Missing[] {
   miss(surfacing.price !== null && !surfacing.currency, 'currency', 'surfacing');
   miss(content.audience === 'named_clubs' && !content.namedClubs.length, 'namedClubs', 'send');
   return missing;
+}
+
+/** The step on which a field of the report, named as the server names it, is answered. */
+export function stepOfField(field: string): FilingStep {
+  const name = field.replace(/^content\./, '').split('.', 1)[0];
+  switch (name) {
+    case 'photos':
+    case 'tells':
+      return 'photos';
+    case 'measurements':
+      return 'measure';
+    case 'surfacing':
+    case 'account':
+      return 'surfacing';
+    case 'audience':
+    case 'namedClubs':
+    case 'embargoUntil':
+    case 'photoLicence':
+    case 'authorNamed':
+      return 'send';
+    default:
+      return 'piece';
+  }
 }
 
 /** The report as it is sent. Throws where something is missing: ask `missingIn` first. */
@@ -146,13 +177,7 @@ export function likelySide(photos: FilingContent['photos']): PhotoSide {
   return photos.some(({ side }) => side === 'reverse') ? 'detail' : 'reverse';
 }
 
-/** The tells without the pins that stood on a photo which is gone. */
-export function withoutPhoto(
-  tells: readonly ReportTell[],
-  photoId: string,
-): readonly ReportTell[] {
-  return tells.map((tell) => ({
-    ...tell,
-    pins: tell.pins.filter((pin) => pin.photoId !== photoId),
-  }));
+/** Blurring changes the files behind a photo's address: another query shows the new ones. */
+export function blursKey({ blurs }: Pick<UploadedPhoto, 'blurs'>): string {
+  return blurs.map(({ x, y, width, height }) => [x, y, width, height].join('-')).join('_');
 }

@@ -2,7 +2,7 @@ import { ChangeDetectionStrategy, Component, inject, signal } from '@angular/cor
 import { takeUntilDestroyed } from '@angular/core/rxjs-interop';
 import { MatButton } from '@angular/material/button';
 import { Router, RouterLink } from '@angular/router';
-import { DraftView } from '#shared/reports/report-content';
+import { DraftContent, DraftView } from '#shared/reports/report-content';
 
 import { problemOf } from '../../http/api-failure';
 import { LoadState, loadState } from '../../http/load-state';
@@ -11,7 +11,9 @@ import { Caution } from '../../ui/caution';
 import { PageHeader } from '../../ui/page-header';
 import { StateMessage } from '../../ui/state-message';
 import { WhenPipe } from '../../ui/when-pipe';
-import { FilingApi, NEW_ID } from '../filing-api';
+import { NEW_ID } from '../../ui/new-id';
+import { FilingApi } from '../filing-api';
+import { KeptDrafts } from '../kept-drafts';
 
 /** Where filing starts: a new report, or one of those begun. */
 @Component({
@@ -36,6 +38,10 @@ export class DraftList {
   protected readonly removed = signal<DraftView | null>(null);
   protected readonly problem = signal('');
   protected readonly words = problemWords;
+  /** Reports that this browser holds changes of which the server may not have. */
+  protected readonly kept = inject(KeptDrafts)
+    .all()
+    .filter(({ id }) => !id.startsWith('change '));
 
   constructor() {
     this.loadDrafts();
@@ -77,8 +83,8 @@ export class DraftList {
     return $localize`Remove the draft ${this.titleOf(draft)}:title:`;
   }
 
-  protected titleOf(draft: DraftView): string {
-    const { presentedAs } = draft.content;
+  protected titleOf({ content }: { readonly content: DraftContent }): string {
+    const { presentedAs } = content;
     const name = presentedAs?.description || (presentedAs?.coinType ?? '').replaceAll('-', ' ');
     return [name || $localize`Report without a name yet`, presentedAs?.year ?? '']
       .join(' ')

@@ -1,7 +1,11 @@
 import { DOCUMENT } from '@angular/common';
 import {
+  AfterRenderRef,
   ChangeDetectionStrategy,
   Component,
+  Injector,
+  LOCALE_ID,
+  afterEveryRender,
   computed,
   inject,
   input,
@@ -14,16 +18,17 @@ import { catchError, fromEvent, map, of, switchMap, throwError } from 'rxjs';
 import { FiledReport } from '#shared/reports/report-content';
 
 import { SessionStore } from '../../auth/session-store';
-import { problemOf } from '../../http/api-failure';
-import { problemWords } from '../../http/problem-words';
+import { isNetworkFailure, problemOf } from '../../http/api-failure';
+import { fieldProblemWords, problemWords } from '../../http/problem-words';
 import { Icon } from '../../ui/icon';
 import { StateMessage } from '../../ui/state-message';
 import { WhenPipe } from '../../ui/when-pipe';
 import { DraftStore } from '../draft-store';
 import { FilingApi } from '../filing-api';
-import { FilingStep, filingSteps, reportOf } from '../filing-content';
+import { FilingStep, Missing, filingSteps, reportOf, stepOfField } from '../filing-content';
 import { FiledMessage } from '../filed-message/filed-message';
 import { MeasureStep } from '../measure-step/measure-step';
+import { PhotoShelf } from '../photo-shelf';
 import { PhotosStep } from '../photos-step/photos-step';
 import { PieceStep } from '../piece-step/piece-step';
 import { SendStep } from '../send-step/send-step';
@@ -46,7 +51,7 @@ import { SurfacingStep } from '../surfacing-step/surfacing-step';
     SurfacingStep,
     WhenPipe,
   ],
-  providers: [DraftStore],
+  providers: [DraftStore, PhotoShelf],
   host: { class: 'tn-page' },
   templateUrl: './filing-page.html',
   styleUrl: './filing-page.scss',
@@ -57,6 +62,9 @@ export class FilingPage {
   private readonly route = inject(ActivatedRoute);
   private readonly router = inject(Router);
   private readonly document = inject(DOCUMENT);
+  private readonly injector = inject(Injector);
+  private readonly locale = inject(LOCALE_ID);
+  protected readonly shelf = inject(PhotoShelf);
   protected readonly store = inject(DraftStore);
 
   /** Of the draft; absent where a filed report is changed. */
@@ -64,10 +72,13 @@ export class FilingPage {
   /** Of the returned report that is changed. */
   readonly number = input<string>();
 
+  private focusing: AfterRenderRef | null = null;
   private readonly rowVersion = signal(0);
   protected readonly loading = signal<'loading' | 'ready' | string>('loading');
   protected readonly sending = signal(false);
   protected readonly problem = signal('');
+  /** What the server did not accept, by the step where it is mended. */
+  protected readonly faults = signal<readonly { step: FilingStep; words: string }[]>([]);
   protected readonly filed = signal<FiledReport | null>(null);
   protected readonly steps = filingSteps;
 
@@ -80,6 +91,17 @@ export class FilingPage {
   protected readonly at = computed(() => filingSteps.indexOf(this.step()));
   protected readonly next = computed(() => filingSteps[this.at() + 1]);
   protected readonly previous = computed(() => filingSteps[this.at() - 1]);
+  protected readonly savedWords = computed(() => {
+    const savedAt = this.store.savedAt();
+    return savedAt && timeWords(savedAt, new Date(), this.locale);
+  });
+  protected readonly saveProblemWords = computed(() => {
+    const problem = this.store.saveProblem();
+    // A lost line mends itself; the banner of the page speaks of it already.
+    return problem && !isNetworkFailure(problem) && problem.status < 500
+      ? problemWords(problem)
+      : '';
+  });
 
   constructor() {
     toObservable(computed(() => ({ draftId: this.draftId(), number: this.number() })))
@@ -99,7 +121,10 @@ export class FilingPage {
   }
 
   hasUnsaved(): boolean {
-    return !this.filed() && ['unsaved', 'saving', 'stale'].includes(this.store.saveState());
+    if (this.filed()) return false;
+    return (
+      this.shelf.isSending() || ['unsaved', 'saving', 'stale'].includes(this.store.saveState())
+    );
   }
 
   protected retryLoad(): void {
@@ -108,9 +133,10 @@ export class FilingPage {
   }
 
   protected send(): void {
-    if (this.sending() || this.store.missing().length) return;
+    if (this.sending() || this.store.missing().length || this.shelf.isSending()) return;
     this.sending.set(true);
     this.problem.set('');
+    this.faults.set([]);
     const content = reportOf(this.store.content());
     const number = this.number();
     const request = number
@@ -121,19 +147,31 @@ export class FilingPage {
         this.store.close();
         this.filed.set(filed);
         this.sending.set(false);
+        this.focusWhenShown('h1');
       },
       error: (error: unknown) => {
         const problem = problemOf(error);
-        const fields = (problem.fields ?? []).map(({ field }) => field).join(', ');
-        this.problem.set(fields ? `${problemWords(problem)} (${fields})` : problemWords(problem));
+        this.problem.set(problemWords(problem));
+        this.faults.set(
+          (problem.fields ?? []).map((field) => ({
+            step: stepOfField(field.field),
+            words: fieldProblemWords(field),
+          })),
+        );
         this.sending.set(false);
       },
     });
   }
 
-  protected goTo(step: FilingStep): void {
-    void this.router.navigate([], { relativeTo: this.route, queryParams: { step } });
+  /** Shows a step from its top, with the focus on its heading or on the field asked for. */
+  protected async goTo(step: FilingStep, field?: string): Promise<void> {
+    await this.router.navigate([], { relativeTo: this.route, queryParams: { step } });
     this.document.defaultView?.scrollTo({ top: 0 });
+    this.focusWhenShown(field ? `[id^="field-${field}"]` : 'h1');
+  }
+
+  protected goToMissing({ step, code }: Missing): void {
+    void this.goTo(step, code === 'paperMoney' ? 'presentedAs' : code);
   }
 
   protected stepWords(step: FilingStep): string {
@@ -163,7 +201,7 @@ export class FilingPage {
           return this.api.filedContent(number).pipe(
             map(({ content, rowVersion }) => {
               this.rowVersion.set(rowVersion);
-              this.store.openFiled(content);
+              this.store.openFiled(number, rowVersion, content);
             }),
           );
         }
@@ -178,14 +216,41 @@ export class FilingPage {
     );
   }
 
-  /** A draft that the server does not have is a new one. */
+  /** A draft that the server does not have is a new one; one kept here opens without a line. */
   private storedDraft(id: string) {
-    return this.api
-      .draft(id)
-      .pipe(
-        catchError((error: unknown) =>
-          problemOf(error).status === 404 ? of(null) : throwError(() => error),
-        ),
-      );
+    return this.api.draft(id).pipe(
+      catchError((error: unknown) => {
+        const problem = problemOf(error);
+        const isUnanswered = isNetworkFailure(problem) || problem.status >= 500;
+        return problem.status === 404 || (isUnanswered && this.store.isKept(id))
+          ? of(null)
+          : throwError(() => error);
+      }),
+    );
   }
+
+  /** A step's code may be under way still: the first of its renderings that has the element. */
+  private focusWhenShown(selector: string): void {
+    this.focusing?.destroy();
+    this.focusing = afterEveryRender(
+      () => {
+        const element = this.document.querySelector<HTMLElement>(`main ${selector}`);
+        if (!element) return;
+        this.focusing?.destroy();
+        this.focusing = null;
+        element.focus();
+      },
+      { injector: this.injector },
+    );
+  }
+}
+
+/** The time alone where it was today, the day as well where it was not. */
+function timeWords(then: Date, now: Date, locale: string): string {
+  const isToday = then.toDateString() === now.toDateString();
+  return new Intl.DateTimeFormat(locale, {
+    ...(isToday ? {} : { day: 'numeric', month: 'long' }),
+    hour: '2-digit',
+    minute: '2-digit',
+  }).format(then);
 }

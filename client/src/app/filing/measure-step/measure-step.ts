@@ -9,64 +9,69 @@ import { Caution } from '../../ui/caution';
 import { quantityWords } from '../../ui/measurement-words';
 import { DraftStore } from '../draft-store';
 
-interface Measurable {
-  readonly quantity: Quantity;
-  readonly units: readonly Measurement['unit'][];
-  /** Usual instruments by their smallest step, in the first unit. */
-  readonly instruments: readonly { readonly step: number; readonly words: string }[];
+type Unit = Measurement['unit'];
+
+interface Instrument {
+  /** Its smallest step, in the unit it stands under. */
+  readonly step: number;
+  readonly words: string;
 }
 
+interface Measurable {
+  readonly quantity: Quantity;
+  /** Usual instruments by the unit they show. */
+  readonly instruments: Readonly<Partial<Record<Unit, readonly Instrument[]>>>;
+}
+
+const scales: Measurable['instruments'] = {
+  g: [
+    { step: 1, words: $localize`kitchen scale, 1 g` },
+    { step: 0.1, words: $localize`pocket scale, 0.1 g` },
+    { step: 0.01, words: $localize`pocket scale, 0.01 g` },
+    { step: 0.001, words: $localize`balance, 0.001 g` },
+  ],
+  gr: [
+    { step: 1, words: $localize`scale, 1 gr` },
+    { step: 0.1, words: $localize`scale, 0.1 gr` },
+  ],
+  dwt: [
+    { step: 0.1, words: $localize`scale, 0.1 dwt` },
+    { step: 0.01, words: $localize`scale, 0.01 dwt` },
+  ],
+  'oz t': [
+    { step: 0.01, words: $localize`scale, 0.01 oz t` },
+    { step: 0.001, words: $localize`scale, 0.001 oz t` },
+  ],
+};
+const callipers: Measurable['instruments'] = {
+  mm: [
+    { step: 1, words: $localize`ruler, 1 mm` },
+    { step: 0.1, words: $localize`calliper, 0.1 mm` },
+    { step: 0.01, words: $localize`calliper, 0.01 mm` },
+  ],
+  in: [
+    { step: 0.01, words: $localize`calliper, 0.01 in` },
+    { step: 0.001, words: $localize`calliper, 0.001 in` },
+  ],
+};
+
 const measurables: readonly Measurable[] = [
-  {
-    quantity: 'weight',
-    units: ['g', 'gr', 'dwt', 'oz t'],
-    instruments: [
-      { step: 1, words: $localize`kitchen scale, 1 g` },
-      { step: 0.1, words: $localize`pocket scale, 0.1 g` },
-      { step: 0.01, words: $localize`pocket scale, 0.01 g` },
-    ],
-  },
-  {
-    quantity: 'diameter',
-    units: ['mm', 'in'],
-    instruments: [
-      { step: 1, words: $localize`ruler, 1 mm` },
-      { step: 0.1, words: $localize`calliper, 0.1 mm` },
-      { step: 0.01, words: $localize`calliper, 0.01 mm` },
-    ],
-  },
-  {
-    quantity: 'thickness',
-    units: ['mm', 'in'],
-    instruments: [
-      { step: 0.1, words: $localize`calliper, 0.1 mm` },
-      { step: 0.01, words: $localize`calliper, 0.01 mm` },
-    ],
-  },
-  {
-    quantity: 'weight_in_water',
-    units: ['g', 'gr'],
-    instruments: [
-      { step: 0.1, words: $localize`pocket scale, 0.1 g` },
-      { step: 0.01, words: $localize`pocket scale, 0.01 g` },
-    ],
-  },
+  { quantity: 'weight', instruments: scales },
+  { quantity: 'diameter', instruments: callipers },
+  { quantity: 'thickness', instruments: callipers },
+  { quantity: 'weight_in_water', instruments: scales },
   {
     quantity: 'water_temperature',
-    units: ['°C'],
-    instruments: [{ step: 1, words: $localize`thermometer, 1 °C` }],
+    instruments: { '°C': [{ step: 1, words: $localize`thermometer, 1 °C` }] },
   },
-  {
-    quantity: 'die_axis',
-    units: ['°'],
-    instruments: [{ step: 10, words: $localize`by eye, 10°` }],
-  },
+  { quantity: 'die_axis', instruments: { '°': [{ step: 10, words: $localize`by eye, 10°` }] } },
   {
     quantity: 'lowest_tone',
-    units: ['Hz'],
-    instruments: [{ step: 10, words: $localize`recording, 10 Hz` }],
+    instruments: { Hz: [{ step: 10, words: $localize`recording, 10 Hz` }] },
   },
 ];
+
+const reading = /^\d+([.,]\d+)?$/;
 
 /** What scale, calliper and magnet say; each is offered, none demanded. */
 @Component({
@@ -82,7 +87,9 @@ export class MeasureStep {
 
   protected readonly words = quantityWords;
   protected readonly entries = measurables.map((measurable) => ({
-    ...measurable,
+    quantity: measurable.quantity,
+    units: Object.keys(measurable.instruments) as Unit[],
+    instrumentsOf: (unit: Unit) => measurable.instruments[unit] ?? [],
     row: this.rowOf(measurable),
   }));
   private readonly rows = this.entries.map(({ row }) => row);
@@ -96,19 +103,21 @@ export class MeasureStep {
     this.form.valueChanges.pipe(takeUntilDestroyed()).subscribe(() => this.takeAnswers());
   }
 
-  private rowOf({ quantity, units, instruments }: Measurable) {
+  /** A step of one unit says nothing in another. */
+  protected forgetInstrument(row: MeasureStep['rows'][number]): void {
+    row.controls.resolution.setValue('');
+  }
+
+  private rowOf({ quantity, instruments }: Measurable) {
     const given = this.store
       .content()
       .measurements.find((measurement) => measurement.quantity === quantity);
+    const unit = given?.unit ?? (Object.keys(instruments)[0] as Unit | undefined) ?? 'g';
+    const isUsual = (instruments[unit] ?? []).some(({ step }) => step === given?.resolution);
     return this.builder.group({
-      quantity: this.builder.control(quantity),
-      value: this.builder.control(given ? String(given.value) : '', [
-        Validators.pattern(/^\d+([.,]\d+)?$/),
-      ]),
-      unit: this.builder.control<Measurement['unit']>(given?.unit ?? units[0] ?? 'g'),
-      resolution: this.builder.control(
-        String(given?.resolution ?? instruments.at(-1)?.step ?? ''),
-      ),
+      value: this.builder.control(given ? String(given.value) : '', Validators.pattern(reading)),
+      unit: this.builder.control<Unit>(unit),
+      resolution: this.builder.control(isUsual ? String(given?.resolution) : ''),
     });
   }
 
@@ -120,15 +129,17 @@ export class MeasureStep {
   }
 
   private takeAnswers(): void {
-    const measured = this.rows.flatMap((row): Measurement[] => {
-      const { quantity, value, unit, resolution } = row.getRawValue();
-      if (!/^\d+([.,]\d+)?$/.test(value)) return [];
+    const measured = this.entries.flatMap(({ quantity, row }): Measurement[] => {
+      const { value, unit, resolution } = row.getRawValue();
+      if (!reading.test(value)) return [];
+      const written = value.replace(',', '.');
       return [
         {
           quantity,
           unit,
-          value: Number(value.replace(',', '.')),
-          resolution: Number(resolution) || null,
+          value: Number(written),
+          // Nothing chosen: the last place written, as a scale shows all it can.
+          resolution: Number(resolution) || lastPlaceOf(written),
         },
       ];
     });
@@ -142,4 +153,9 @@ export class MeasureStep {
         : measured,
     });
   }
+}
+
+/** 24.90 gives 0.01, 25 gives 1. */
+function lastPlaceOf(written: string): number {
+  return Number(`1e-${written.split('.')[1]?.length ?? 0}`);
 }

@@ -1,25 +1,30 @@
-import { ChangeDetectionStrategy, Component, computed, inject, signal } from '@angular/core';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  inject,
+  signal,
+  viewChild,
+} from '@angular/core';
+import { takeUntilDestroyed, toObservable } from '@angular/core/rxjs-interop';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
-import {
-  BlurArea,
-  PlacedPhoto,
-  UploadedPhoto,
-  photoSides,
-} from '#shared/reports/photo';
-import { FacePlace, Pin } from '#shared/reports/report-content';
+import { BlurArea, PlacedPhoto, UploadedPhoto, photoSides } from '#shared/reports/photo';
+import { FacePlace } from '#shared/reports/report-content';
 
-import { problemOf } from '../../http/api-failure';
-import { problemWords } from '../../http/problem-words';
 import { Disc, DiscPhoto } from '../../ui/disc';
+import { Icon } from '../../ui/icon';
+import { NEW_ID } from '../../ui/new-id';
 import { PlacedPin } from '../../ui/pin-layer';
 import { sideWords } from '../../ui/report-words';
+import { BlurEditor } from '../blur-editor/blur-editor';
+import { CircleFields } from '../circle-fields/circle-fields';
 import { DraftStore } from '../draft-store';
-import { FilingApi, NEW_ID } from '../filing-api';
-import { likelyCircle, likelySide, withoutPhoto } from '../filing-content';
-import { PhotoFrame } from '../photo-frame/photo-frame';
+import { likelyCircle } from '../filing-content';
+import { PhotoShelf } from '../photo-shelf';
 import { PhotoUploader } from '../photo-uploader/photo-uploader';
 import { PinEditor } from '../pin-editor/pin-editor';
+import { withPin, withPinMoved, withSideOfPhoto, withoutPhoto, withoutPin } from '../pins';
 import { TellEditor } from '../tell-editor/tell-editor';
 
 /** Photos with what is seen on them: side, circle and upright, blurred parts, tells and pins. */
@@ -27,10 +32,12 @@ import { TellEditor } from '../tell-editor/tell-editor';
   selector: 'tn-photos-step',
   changeDetection: ChangeDetectionStrategy.OnPush,
   imports: [
+    BlurEditor,
+    CircleFields,
     Disc,
+    Icon,
     MatFormFieldModule,
     MatInput,
-    PhotoFrame,
     PhotoUploader,
     PinEditor,
     TellEditor,
@@ -39,76 +46,59 @@ import { TellEditor } from '../tell-editor/tell-editor';
   styleUrls: ['../step.scss', './photos-step.scss'],
 })
 export class PhotosStep {
-  private readonly api = inject(FilingApi);
   private readonly newId = inject(NEW_ID);
   protected readonly store = inject(DraftStore);
+  protected readonly shelf = inject(PhotoShelf);
+  private readonly tellEditor = viewChild.required(TellEditor);
 
-  /** Sizes and blurs of the photos, which the draft does not hold. */
-  private readonly known = signal<ReadonlyMap<string, UploadedPhoto>>(new Map());
   private readonly wanted = signal<string | null>(null);
-  protected readonly mode = signal<'pins' | 'circle' | 'blur'>('pins');
+  protected readonly isBlurring = signal(false);
   protected readonly chosenTell = signal(0);
   protected readonly chosenPin = signal<string | null>(null);
-  protected readonly problem = signal('');
+  /** A spot that was tapped before any tell was named. */
+  protected readonly pendingSpot = signal<FacePlace | null>(null);
   protected readonly sides = photoSides;
   protected readonly sideWords = sideWords;
 
   protected readonly thumbs = computed(() =>
-    this.store.content().photos.flatMap((placed) => {
-      const photo = this.known().get(placed.photoId);
-      return photo ? [{ placed, photo, disc: discOf(photo, placed) }] : [];
+    this.store.content().photos.map((placed) => {
+      const photo = this.shelf.known().get(placed.photoId);
+      return { placed, photo, disc: photo ? discOf(photo, placed) : null };
     }),
   );
   protected readonly chosen = computed(
     () =>
       this.thumbs().find(({ placed }) => placed.photoId === this.wanted()) ?? this.thumbs()[0],
   );
-  /** The face that pins go on, or null for edge and details. */
+  protected readonly side = computed(() => this.chosen()?.placed.side ?? 'detail');
+  /** The face that pins are tapped on, or null for edge and details. */
   protected readonly face = computed((): FacePlace['side'] | null => {
-    const side = this.chosen()?.placed.side;
+    const side = this.side();
     return side === 'obverse' || side === 'reverse' ? side : null;
   });
   protected readonly pins = computed((): readonly PlacedPin[] =>
     this.store.content().tells.flatMap((tell, at) =>
-      tell.pins.flatMap((pin) =>
-        pin.photoId === this.chosen()?.placed.photoId && pin.place.side !== 'edge'
-          ? [
-              {
-                id: pin.id,
-                number: at + 1,
-                label: tell.tellId.replaceAll('-', ' '),
-                place: pin.place,
-              },
-            ]
+      tell.pins.flatMap(({ id, photoId, place }) =>
+        photoId === this.chosen()?.placed.photoId && place.side !== 'edge'
+          ? [{ id, number: at + 1, label: tell.tellId.replaceAll('-', ' '), place }]
           : [],
       ),
     ),
   );
 
   constructor() {
-    for (const { photoId } of this.store.content().photos) {
-      this.api.photo(photoId).subscribe({
-        next: (photo) => this.remember(photo),
-        error: (error: unknown) => this.problem.set(problemWords(problemOf(error))),
+    this.shelf.fetchPhotos();
+    toObservable(this.shelf.newest)
+      .pipe(takeUntilDestroyed())
+      .subscribe((id) => {
+        if (id) this.choosePhoto(id);
       });
-    }
-  }
-
-  protected addPhoto(photo: UploadedPhoto): void {
-    this.remember(photo);
-    const { photos } = this.store.content();
-    if (photos.some(({ photoId }) => photoId === photo.id)) return;
-    const side = likelySide(photos);
-    const circle =
-      side === 'obverse' || side === 'reverse' ? likelyCircle(photo.width, photo.height) : null;
-    this.store.update({
-      photos: [...photos, { photoId: photo.id, side, circle, uprightDegrees: 0, caption: '' }],
-    });
-    this.wanted.set(photo.id);
   }
 
   protected choosePhoto(id: string): void {
     this.wanted.set(id);
+    this.isBlurring.set(false);
+    this.pendingSpot.set(null);
   }
 
   protected changePlaced(change: Partial<PlacedPhoto>): void {
@@ -124,24 +114,21 @@ export class PhotosStep {
     const side = photoSides.find((each) => each === value);
     const chosen = this.chosen();
     if (!side || !chosen) return;
+    const { photoId, circle } = chosen.placed;
+    const likely = chosen.photo && likelyCircle(chosen.photo.width, chosen.photo.height);
     const isFace = side === 'obverse' || side === 'reverse';
-    this.changePlaced({
-      side,
-      circle: isFace
-        ? (chosen.placed.circle ?? likelyCircle(chosen.photo.width, chosen.photo.height))
-        : null,
+    this.store.update({
+      photos: this.store.content().photos.map((placed) =>
+        placed.photoId === photoId
+          ? { ...placed, side, circle: isFace ? (circle ?? likely ?? null) : null }
+          : placed,
+      ),
+      tells: withSideOfPhoto(
+        this.store.content().tells,
+        photoId,
+        side === 'detail' ? null : side,
+      ),
     });
-    const face = side === 'obverse' || side === 'reverse' ? side : null;
-    const tells = this.store.content().tells.map((tell) => ({
-      ...tell,
-      pins: tell.pins.flatMap((pin): readonly Pin[] => {
-        if (pin.photoId !== chosen.placed.photoId) return [pin];
-        return face && pin.place.side !== 'edge'
-          ? [{ ...pin, place: { ...pin.place, side: face } }]
-          : [];
-      }),
-    }));
-    this.store.update({ tells });
   }
 
   protected movePhoto(by: -1 | 1): void {
@@ -150,6 +137,7 @@ export class PhotosStep {
     const [moved] = photos.splice(at, 1);
     if (!moved) return;
     photos.splice(Math.max(0, at + by), 0, moved);
+    this.wanted.set(moved.photoId);
     this.store.update({ photos });
   }
 
@@ -166,53 +154,37 @@ export class PhotosStep {
 
   protected blurPhoto(blurs: readonly BlurArea[]): void {
     const id = this.chosen()?.placed.photoId;
-    if (!id) return;
-    this.problem.set('');
-    this.api.blurPhoto(id, blurs).subscribe({
-      next: (photo) => this.remember(photo),
-      error: (error: unknown) => this.problem.set(problemWords(problemOf(error))),
-    });
+    if (id) this.shelf.blurPhoto(id, blurs);
   }
 
+  /** A tap on the coin: a pin of the chosen tell; with no tell yet, the tell is asked first. */
   protected placePin(place: FacePlace): void {
     const photoId = this.chosen()?.placed.photoId;
-    const tells = this.store.content().tells;
+    const { tells } = this.store.content();
     if (!photoId) return;
     if (!tells.length) {
-      this.problem.set($localize`Name a tell first, then tap the spot where it is seen.`);
+      this.pendingSpot.set(place);
+      this.tellEditor().focusSearch();
       return;
     }
-    this.problem.set('');
     const id = this.newId();
-    this.store.update({
-      tells: tells.map((tell, at) =>
-        at === Math.min(this.chosenTell(), tells.length - 1)
-          ? { ...tell, pins: [...tell.pins, { id, photoId, note: '', place }] }
-          : tell,
-      ),
-    });
+    const at = Math.min(this.chosenTell(), tells.length - 1);
+    this.store.update({ tells: withPin(tells, at, { id, photoId, note: '', place }) });
     this.chosenPin.set(id);
   }
 
+  protected placePending(): void {
+    const spot = this.pendingSpot();
+    this.pendingSpot.set(null);
+    if (spot) this.placePin(spot);
+  }
+
   protected movePin({ id, place }: { id: string; place: FacePlace }): void {
-    this.store.update({
-      tells: this.store.content().tells.map((tell) => ({
-        ...tell,
-        pins: tell.pins.map((pin) => (pin.id === id ? { ...pin, place } : pin)),
-      })),
-    });
+    this.store.update({ tells: withPinMoved(this.store.content().tells, id, place) });
   }
 
   protected removePin(id: string): void {
-    this.store.update({
-      tells: this.store
-        .content()
-        .tells.map((tell) => ({ ...tell, pins: tell.pins.filter((pin) => pin.id !== id) })),
-    });
-  }
-
-  private remember(photo: UploadedPhoto): void {
-    this.known.update((known) => new Map(known).set(photo.id, photo));
+    this.store.update({ tells: withoutPin(this.store.content().tells, id) });
   }
 }
 

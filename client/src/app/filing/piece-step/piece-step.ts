@@ -1,11 +1,24 @@
-import { ChangeDetectionStrategy, Component, computed, effect, inject, signal } from '@angular/core';
+import { NgTemplateOutlet } from '@angular/common';
+import {
+  ChangeDetectionStrategy,
+  Component,
+  computed,
+  effect,
+  inject,
+  signal,
+} from '@angular/core';
 import { takeUntilDestroyed, toSignal } from '@angular/core/rxjs-interop';
-import { FormControl, NonNullableFormBuilder, ReactiveFormsModule, Validators } from '@angular/forms';
+import {
+  FormControl,
+  NonNullableFormBuilder,
+  ReactiveFormsModule,
+  Validators,
+} from '@angular/forms';
 import { MatAutocompleteModule } from '@angular/material/autocomplete';
 import { MatButton } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
-import { catchError, debounceTime, map, of, startWith, switchMap } from 'rxjs';
+import { catchError, debounceTime, filter, map, of, startWith, switchMap } from 'rxjs';
 import { CoinTypeSummary } from '#shared/catalogue/coin-type-view';
 import {
   ComponentKind,
@@ -43,6 +56,7 @@ import { speaksOfPaperMoney } from '../filing-content';
     MatButton,
     MatFormFieldModule,
     MatInput,
+    NgTemplateOutlet,
     ReactiveFormsModule,
   ],
   templateUrl: './piece-step.html',
@@ -68,7 +82,9 @@ export class PieceStep {
   protected readonly judgementWords = judgementWords;
 
   private readonly start = this.store.content();
-  protected readonly search = new FormControl('', { nonNullable: true });
+  protected readonly search = new FormControl<string | CoinTypeSummary>('', {
+    nonNullable: true,
+  });
   protected readonly form = this.builder.group({
     club: [this.start.club],
     kind: [this.start.presentedAs.kind],
@@ -88,14 +104,24 @@ export class PieceStep {
   );
   protected readonly chosenType = signal<Pick<CoinTypeSummary, 'slug' | 'name'> | null>(null);
   protected readonly hasType = computed(() => this.store.content().presentedAs.coinType !== null);
+  private readonly typed = toSignal(this.search.valueChanges, { initialValue: '' });
+  /** Words in the search that no coin type was chosen for. */
+  protected readonly unchosen = computed(() => {
+    const typed = this.typed();
+    const text = typeof typed === 'string' ? typed.trim() : '';
+    return text === this.chosenType()?.name ? '' : text;
+  });
   protected readonly isPaperMoney = computed(() =>
-    speaksOfPaperMoney(this.store.content().presentedAs.description),
+    speaksOfPaperMoney(
+      this.isDescribed() ? this.store.content().presentedAs.description : this.unchosen(),
+    ),
   );
 
   protected readonly found = toSignal(
     this.search.valueChanges.pipe(
       startWith(''),
       debounceTime(200),
+      filter((typed) => typeof typed === 'string'),
       switchMap((text) =>
         this.catalogue.coinTypes({ text: text.trim() }).pipe(
           map(({ items }) => ({ items, failed: false })),
@@ -157,9 +183,12 @@ export class PieceStep {
     });
   }
 
+  /** What was typed for the search goes along: most often it is the description. */
   protected describeInstead(): void {
+    const description = this.unchosen();
     this.forgetType();
     this.isDescribed.set(true);
+    if (description) this.form.patchValue({ description });
   }
 
   protected judgementOf(kind: ComponentKind): Judgement {
@@ -172,10 +201,12 @@ export class PieceStep {
   protected judge(kind: ComponentKind, judgement: string): void {
     const wanted = judgements.find((each) => each === judgement);
     if (!wanted) return;
-    const others = this.store.content().components.filter((component) => component.kind !== kind);
+    const { components } = this.store.content();
+    const note = components.find((component) => component.kind === kind)?.note ?? '';
+    const others = components.filter((component) => component.kind !== kind);
     this.store.update({
       components:
-        wanted === 'not_present' ? others : [...others, { kind, judgement: wanted, note: '' }],
+        wanted === 'not_present' ? others : [...others, { kind, judgement: wanted, note }],
     });
   }
 

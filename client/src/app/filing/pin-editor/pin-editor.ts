@@ -8,33 +8,30 @@ import {
   output,
   viewChild,
 } from '@angular/core';
-import { PlacedPhoto, UploadedPhoto } from '#shared/reports/photo';
+import { PlacedPhoto, UploadedPhoto, photoAddress } from '#shared/reports/photo';
 import { FacePlace } from '#shared/reports/report-content';
-import { photoToFace, roundFace } from '#shared/tells/coin-coordinates';
+import { faceToPhoto, photoToFace } from '#shared/tells/coin-coordinates';
 
-import { Disc, DiscPhoto } from '../../ui/disc';
-import { PlacedPin, spotOf } from '../../ui/pin-layer';
+import { PlacedPin } from '../../ui/pin-layer';
+import { Framing, Handle, arrowOf, draggedTo, faceView, handlePoints, movedByKey,
+  pointIn } from '../circle-handles';
+import { blursKey, likelyCircle } from '../filing-content';
 
-/** The disc itself as a photo in which the coin is upright and fills the square. */
-const discView = {
-  width: 1,
-  height: 1,
-  circle: { x: 0.5, y: 0.5, radius: 0.5 },
-  uprightDegrees: 0,
-};
-const minute = 1 / 60;
+/** CSS pixels that a finger may slip and still tap. */
+const slip = 8;
+/** What an arrow key moves a pin by, in radii of the coin; with the shift key five times that. */
+const pinStep = 0.01;
 
 /**
- * A face as a disc on which pins are placed: a tap on the disc places one for the chosen tell,
- * a pin is dragged, or moved by the arrow keys (round the clock, and towards the rim or centre).
+ * The whole photo of a face with the coin's circle and the pins on it. A tap on the coin chooses
+ * a spot; pins and the handles of the circle are dragged, or moved by the arrow keys.
  */
 @Component({
   selector: 'tn-pin-editor',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  imports: [Disc],
   host: { class: 'tn-tray' },
   templateUrl: './pin-editor.html',
-  styleUrl: './pin-editor.scss',
+  styleUrls: ['../photo-ground.scss', './pin-editor.scss'],
 })
 export class PinEditor {
   readonly photo = input.required<UploadedPhoto>();
@@ -47,88 +44,133 @@ export class PinEditor {
   readonly spotChosen = output<FacePlace>();
   readonly pinMoved = output<{ readonly id: string; readonly place: FacePlace }>();
   readonly pinRemoved = output<string>();
+  /** Circle or upright were changed. */
+  readonly framed = output<Partial<Framing>>();
+  readonly gestureBegun = output();
+  readonly gestureEnded = output();
 
   private readonly ground = viewChild.required<ElementRef<HTMLElement>>('ground');
-  private dragged: string | null = null;
-  private wasDragged = false;
+  private dragged: { readonly pin: string } | { readonly handle: Handle } | null = null;
+  private pressedAt: { readonly x: number; readonly y: number } | null = null;
 
-  protected readonly discPhoto = computed(
-    (): DiscPhoto => ({
-      id: this.photo().id,
-      width: this.photo().width,
-      height: this.photo().height,
-      side: this.placed().side,
-      circle: this.placed().circle,
-      uprightDegrees: this.placed().uprightDegrees,
+  protected readonly address = computed(
+    () => `${photoAddress(this.photo().id, 'large', 'webp')}?${blursKey(this.photo())}`,
+  );
+  protected readonly view = computed(() =>
+    faceView(
+      this.photo(),
+      this.placed(),
+      this.placed().circle ?? likelyCircle(this.photo().width, this.photo().height),
+    ),
+  );
+  /** The photo is never higher than the window, so that it can be seen whole. */
+  protected readonly widest = computed(
+    () => `min(100%, calc(72dvh * ${this.photo().width / this.photo().height}))`,
+  );
+  protected readonly ellipse = computed(() => {
+    const { circle, width, height } = this.view();
+    return { ...circle, down: (circle.radius * width) / height };
+  });
+  protected readonly handles = computed(() => {
+    const points = handlePoints(this.view());
+    return (['upright', 'radius', 'centre'] as const).map((handle) => ({
+      handle,
+      ...points[handle],
+      words: handleWords(handle),
+    }));
+  });
+  protected readonly marks = computed(() =>
+    this.pins().map((pin) => {
+      const point = faceToPhoto(pin.place, this.view());
+      // An interpolated aria-label with i18n is set as a property, which no browser reads.
+      const words = $localize`Pin ${pin.number}:number:, ${pin.label}:tell:: arrow keys move it, \
+Delete removes it`;
+      return { ...pin, ...point, words, leftward: point.x > 0.86 };
     }),
   );
-  protected readonly marks = computed(() =>
-    this.pins().map((pin) => ({
-      ...pin,
-      ...spotOf(pin.place),
-      // An interpolated aria-label with i18n is set as a property, which no browser reads.
-      words: $localize`Pin ${pin.number}:number:, ${pin.label}:tell:: arrow keys move it, \
-Delete removes it`,
-    })),
-  );
 
-  protected placeAt(event: MouseEvent): void {
-    if (this.wasDragged) {
-      this.wasDragged = false;
-      return;
-    }
-    this.spotChosen.emit(this.coinPlaceOf(event));
+  protected press(event: PointerEvent): void {
+    if (event.button === 0) this.pressedAt = { x: event.clientX, y: event.clientY };
   }
 
-  protected startDrag(id: string, event: PointerEvent): void {
-    event.stopPropagation();
+  protected startPin(id: string, event: PointerEvent): void {
     this.chosen.set(id);
-    this.dragged = id;
-    this.ground().nativeElement.setPointerCapture(event.pointerId);
+    this.start({ pin: id }, event);
+  }
+
+  protected startHandle(handle: Handle, event: PointerEvent): void {
+    this.start({ handle }, event);
   }
 
   protected drag(event: PointerEvent): void {
-    if (!this.dragged) return;
-    this.wasDragged = true;
-    this.pinMoved.emit({ id: this.dragged, place: this.coinPlaceOf(event) });
+    const { dragged } = this;
+    if (!dragged) return;
+    const point = pointIn(this.ground().nativeElement, event);
+    if ('pin' in dragged) {
+      const place = photoToFace(point, this.side(), this.view());
+      this.pinMoved.emit({ id: dragged.pin, place });
+    } else {
+      this.framed.emit(draggedTo(dragged.handle, point, this.view()));
+    }
+  }
+
+  protected release(event: PointerEvent): void {
+    const { pressedAt, dragged } = this;
+    this.endDrag();
+    if (dragged || !pressedAt) return;
+    if (Math.hypot(event.clientX - pressedAt.x, event.clientY - pressedAt.y) > slip) return;
+    const point = pointIn(this.ground().nativeElement, event);
+    this.spotChosen.emit(photoToFace(point, this.side(), this.view()));
   }
 
   protected endDrag(): void {
+    if (this.dragged) this.gestureEnded.emit();
     this.dragged = null;
+    this.pressedAt = null;
   }
 
-  protected moveByKey(pin: PlacedPin, event: KeyboardEvent): void {
-    const { clockHours, radiusFraction } = pin.place;
-    const size = event.shiftKey ? 5 : 1;
-    const [turn, out] =
-      {
-        ArrowRight: [2 * minute, 0],
-        ArrowLeft: [-2 * minute, 0],
-        ArrowUp: [0, 0.01],
-        ArrowDown: [0, -0.01],
-      }[event.key] ?? [];
+  protected movePinByKey(pin: PlacedPin, event: KeyboardEvent): void {
     if (event.key === 'Delete' || event.key === 'Backspace') {
       event.preventDefault();
       this.pinRemoved.emit(pin.id);
+      return;
     }
-    if (turn === undefined || out === undefined) return;
+    const arrow = arrowOf(event.key);
+    if (!arrow) return;
     event.preventDefault();
-    this.pinMoved.emit({
-      id: pin.id,
-      place: roundFace({
-        side: pin.place.side,
-        clockHours: (clockHours + turn * size + 12) % 12,
-        radiusFraction: radiusFraction + out * size,
-      }),
-    });
+    const view = this.view();
+    const step = pinStep * (event.shiftKey ? 5 : 1) * view.circle.radius;
+    const { x, y } = faceToPhoto(pin.place, view);
+    const moved = {
+      x: x + arrow[0] * step,
+      y: y + (arrow[1] * step * view.width) / view.height,
+    };
+    this.pinMoved.emit({ id: pin.id, place: photoToFace(moved, this.side(), view) });
   }
 
-  private coinPlaceOf(event: MouseEvent): FacePlace {
-    const box = this.ground().nativeElement.getBoundingClientRect();
-    const spot = {
-      x: (event.clientX - box.left) / box.width,
-      y: (event.clientY - box.top) / box.height,
-    };
-    return photoToFace(spot, this.side(), discView);
+  protected moveHandleByKey(handle: Handle, event: KeyboardEvent): void {
+    const arrow = arrowOf(event.key);
+    if (!arrow) return;
+    event.preventDefault();
+    this.framed.emit(movedByKey(handle, arrow, event.shiftKey ? 5 : 1, this.view()));
+  }
+
+  private start(dragged: NonNullable<PinEditor['dragged']>, event: PointerEvent): void {
+    event.stopPropagation();
+    if (event.button !== 0) return;
+    this.dragged = dragged;
+    this.gestureBegun.emit();
+    this.ground().nativeElement.setPointerCapture(event.pointerId);
+  }
+}
+
+function handleWords(handle: Handle): string {
+  switch (handle) {
+    case 'centre':
+      return $localize`Centre of the coin: arrow keys move it`;
+    case 'radius':
+      return $localize`Rim of the coin: arrow keys make the circle larger or smaller`;
+    case 'upright':
+      return $localize`Top of the coin: arrow keys turn it`;
   }
 }

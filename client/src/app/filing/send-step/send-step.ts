@@ -4,21 +4,25 @@ import { NonNullableFormBuilder, ReactiveFormsModule } from '@angular/forms';
 import { MatButton } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
-import { catchError, map, of } from 'rxjs';
+import { Subject, map, startWith, switchMap } from 'rxjs';
 import { ClubSummary } from '#shared/accounts/session';
 import { audiences } from '#shared/access/audience';
 
+import { LoadState, loadState } from '../../http/load-state';
+import { problemWords } from '../../http/problem-words';
 import { Caution } from '../../ui/caution';
 import { audienceWords } from '../../ui/report-words';
+import { StateMessage } from '../../ui/state-message';
 import { DraftStore } from '../draft-store';
 import { FilingApi } from '../filing-api';
-import { FilingStep, Missing } from '../filing-content';
+import { Missing } from '../filing-content';
+import { PhotoShelf } from '../photo-shelf';
 
 /** What is missing, who will see it, under which licence; then it can be sent. */
 @Component({
   selector: 'tn-send-step',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  imports: [Caution, MatButton, MatFormFieldModule, MatInput, ReactiveFormsModule],
+  imports: [Caution, MatButton, MatFormFieldModule, MatInput, ReactiveFormsModule, StateMessage],
   templateUrl: './send-step.html',
   styleUrls: ['../step.scss', './send-step.scss'],
 })
@@ -26,18 +30,23 @@ export class SendStep {
   protected readonly store = inject(DraftStore);
   private readonly start = this.store.content();
 
-  readonly stepChosen = output<FilingStep>();
+  /** What is missing was asked for: its field is where to go. */
+  readonly missingChosen = output<Missing>();
 
   protected readonly audiences = audiences;
   protected readonly audienceWords = audienceWords;
+  protected readonly words = problemWords;
+  protected readonly isSendingPhotos = inject(PhotoShelf).isSending;
+  /** The day after today: an embargo until an earlier one would be none. */
+  protected readonly firstDay = new Date(Date.now() + 86_400_000).toISOString().slice(0, 10);
+  private readonly api = inject(FilingApi);
+  private readonly reloads = new Subject<void>();
   protected readonly clubs = toSignal(
-    inject(FilingApi)
-      .clubs()
-      .pipe(
-        map(({ items }) => items.filter(({ slug }) => slug !== this.store.content().club)),
-        catchError(() => of([] as readonly ClubSummary[])),
-      ),
-    { initialValue: [] as readonly ClubSummary[] },
+    this.reloads.pipe(
+      startWith(undefined),
+      switchMap(() => loadState(this.api.clubs().pipe(map(({ items }) => this.others(items))))),
+    ),
+    { initialValue: { state: 'loading' } as LoadState<readonly ClubSummary[]> },
   );
   protected readonly named = computed(() => new Set(this.store.content().namedClubs));
 
@@ -58,6 +67,10 @@ export class SendStep {
           : null,
       });
     });
+  }
+
+  protected reloadClubs(): void {
+    this.reloads.next();
   }
 
   protected nameClub(slug: string, isNamed: boolean): void {
@@ -88,5 +101,9 @@ export class SendStep {
       case 'namedClubs':
         return $localize`At least one club to be named`;
     }
+  }
+
+  private others(clubs: readonly ClubSummary[]): readonly ClubSummary[] {
+    return clubs.filter(({ slug }) => slug !== this.store.content().club);
   }
 }

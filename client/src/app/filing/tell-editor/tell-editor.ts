@@ -1,24 +1,27 @@
-import { ChangeDetectionStrategy, Component, computed, inject, input, model } from '@angular/core';
+import { ChangeDetectionStrategy, Component, ElementRef, computed, inject, input, model, output,
+  viewChild } from '@angular/core';
 import { toSignal } from '@angular/core/rxjs-interop';
 import { FormControl, ReactiveFormsModule } from '@angular/forms';
 import { MatAutocompleteModule } from '@angular/material/autocomplete';
 import { MatButton } from '@angular/material/button';
 import { MatFormFieldModule } from '@angular/material/form-field';
 import { MatInput } from '@angular/material/input';
-import { startWith } from 'rxjs';
+import { Subject, startWith, switchMap } from 'rxjs';
 import { Disclosure, disclosures } from '#shared/access/audience';
 import { TaxonomyView, TellView } from '#shared/catalogue/coin-type-view';
-import { FacePlace, Pin, ReportTell } from '#shared/reports/report-content';
-import { roundFace } from '#shared/tells/coin-coordinates';
+import { PhotoSide } from '#shared/reports/photo';
+import { Pin, PinPlace, ReportTell } from '#shared/reports/report-content';
+import { genuineFeaturesNamed, narrowerDisclosure } from '#shared/tells/taxonomy';
 
 import { LoadState, loadState } from '../../http/load-state';
 import { problemWords } from '../../http/problem-words';
 import { CatalogueApi } from '../../reports/catalogue-api';
+import { NEW_ID } from '../../ui/new-id';
+import { disclosureWords } from '../../ui/report-words';
 import { StateMessage } from '../../ui/state-message';
-import { clockWords } from '../../ui/pin-layer';
-import { disclosureWords, sideWords } from '../../ui/report-words';
 import { DraftStore } from '../draft-store';
-import { NEW_ID } from '../filing-api';
+import { PinRow } from '../pin-row/pin-row';
+import { withPin, withPinMoved, withoutPin } from '../pins';
 
 /**
  * The tells of the report: chosen from the taxonomy, each with a note, who may read it, and its
@@ -32,6 +35,7 @@ import { NEW_ID } from '../filing-api';
     MatButton,
     MatFormFieldModule,
     MatInput,
+    PinRow,
     ReactiveFormsModule,
     StateMessage,
   ],
@@ -41,23 +45,29 @@ import { NEW_ID } from '../filing-api';
 export class TellEditor {
   private readonly catalogue = inject(CatalogueApi);
   private readonly newId = inject(NEW_ID);
+  private readonly reloads = new Subject<void>();
+  private readonly searchField = viewChild<ElementRef<HTMLInputElement>>('searchField');
   protected readonly store = inject(DraftStore);
 
-  /** The photo that new pins go on; null where it shows no face. */
+  /** The photo that new pins go on. */
   readonly photoId = input<string | null>(null);
-  readonly side = input<FacePlace['side']>('obverse');
-  /** Position of the tell that a tap on the disc places a pin of. */
+  readonly side = input<PhotoSide>('obverse');
+  /** True while a spot waits for its tell to be named. */
+  readonly isAsked = input(false);
+  /** Position of the tell that a tap on the photo places a pin of. */
   readonly chosenTell = model(0);
+  readonly tellAdded = output();
 
-  protected readonly disclosures = disclosures;
   protected readonly disclosureWords = disclosureWords;
-  protected readonly clockWords = clockWords;
-  protected readonly sideWords = sideWords;
   protected readonly words = problemWords;
   protected readonly search = new FormControl<string | TellView>('', { nonNullable: true });
-  protected readonly taxonomy = toSignal(loadState(this.catalogue.tells()), {
-    initialValue: { state: 'loading' } as LoadState<TaxonomyView>,
-  });
+  protected readonly taxonomy = toSignal(
+    this.reloads.pipe(
+      startWith(undefined),
+      switchMap(() => loadState(this.catalogue.tells())),
+    ),
+    { initialValue: { state: 'loading' } as LoadState<TaxonomyView> },
+  );
   private readonly asked = toSignal(this.search.valueChanges.pipe(startWith('')), {
     initialValue: '',
   });
@@ -65,11 +75,14 @@ export class TellEditor {
     const state = this.taxonomy();
     return state.state === 'ready' ? state.data : null;
   });
+  private readonly askedText = computed(() => {
+    const asked = this.asked();
+    return typeof asked === 'string' ? asked.trim() : '';
+  });
 
   /** Tells that fit the words, under the method that speaks for them first. */
   protected readonly groups = computed(() => {
-    const asked = this.asked();
-    const text = (typeof asked === 'string' ? asked : '').trim().toLowerCase();
+    const text = this.askedText().toLowerCase();
     const taken = new Set(this.store.content().tells.map(({ tellId }) => tellId));
     return (this.all()?.methods ?? [])
       .map((method) => ({
@@ -84,27 +97,43 @@ export class TellEditor {
       .filter(({ tells }) => tells.length);
   });
 
-  /** A feature of genuine pieces that the words describe, which is no tell. */
-  protected readonly genuine = computed(() => {
-    const asked = this.asked();
-    return this.genuineIn(typeof asked === 'string' ? asked : '');
-  });
+  /** Features of genuine pieces that the words describe, which are no tells. */
+  protected readonly genuine = computed(() => this.genuineIn(this.askedText()));
 
   protected readonly rows = computed(() =>
-    this.store.content().tells.map((tell) => ({
-      ...tell,
-      known: this.all()?.tells.find(({ id }) => id === tell.tellId) ?? null,
-      genuine: this.genuineIn(tell.note),
-    })),
+    this.store.content().tells.map((tell) => {
+      const known = this.all()?.tells.find(({ id }) => id === tell.tellId) ?? null;
+      return {
+        ...tell,
+        known,
+        alike: (known?.confusedWith ?? []).map(({ id }) => id.replaceAll('-', ' ')).join(', '),
+        genuine: this.genuineIn(tell.note),
+        disclosures: disclosures.filter(
+          (each) =>
+            each === tell.disclosure ||
+            narrowerDisclosure(each, known?.disclosure ?? 'public') === each,
+        ),
+      };
+    }),
   );
+
+  /** Brings the reader to the list from which a tell is named. */
+  focusSearch(): void {
+    this.searchField()?.nativeElement.focus();
+  }
+
+  protected reloadTells(): void {
+    this.reloads.next();
+  }
 
   protected addTell(tell: TellView): void {
     this.search.setValue('');
-    const tells = this.store.content().tells;
+    const { tells } = this.store.content();
     this.store.update({
       tells: [...tells, { tellId: tell.id, note: '', disclosure: tell.disclosure, pins: [] }],
     });
     this.chosenTell.set(tells.length);
+    this.tellAdded.emit();
   }
 
   protected removeTell(at: number): void {
@@ -125,37 +154,22 @@ export class TellEditor {
     if (disclosure) this.changeTell(at, { disclosure });
   }
 
-  /** A pin halfway to the rim at twelve, to be moved by numbers or arrow keys. */
+  /** A pin where none is yet, to be moved by numbers or arrow keys. */
   protected addPin(at: number): void {
     const photoId = this.photoId();
-    const tell = this.store.content().tells[at];
-    if (!photoId || !tell) return;
-    const pin: Pin = {
-      id: this.newId(),
-      photoId,
-      note: '',
-      place: { side: this.side(), clockHours: 0, radiusFraction: 0.5 },
-    };
-    this.changeTell(at, { pins: [...tell.pins, pin] });
+    const place = startOf(this.side());
+    if (!photoId || !place) return;
+    const pin: Pin = { id: this.newId(), photoId, note: '', place };
+    this.store.update({ tells: withPin(this.store.content().tells, at, pin) });
     this.chosenTell.set(at);
   }
 
-  protected removePin(at: number, id: string): void {
-    const pins = this.store.content().tells[at]?.pins ?? [];
-    this.changeTell(at, { pins: pins.filter((pin) => pin.id !== id) });
+  protected removePin(id: string): void {
+    this.store.update({ tells: withoutPin(this.store.content().tells, id) });
   }
 
-  /** Takes `3:31` or hours with decimals for the clock, and a fraction for the radius. */
-  protected movePin(at: number, pin: Pin, clock: string, fraction: number): void {
-    if (pin.place.side === 'edge') return;
-    const [hours = '', minutes = '0'] = clock.split(':');
-    const clockHours = (Number(hours) + Number(minutes) / 60) % 12;
-    if (Number.isNaN(clockHours) || Number.isNaN(fraction)) return;
-    const place = roundFace({ side: pin.place.side, clockHours, radiusFraction: fraction });
-    const pins = this.store.content().tells[at]?.pins ?? [];
-    this.changeTell(at, {
-      pins: pins.map((each) => (each.id === pin.id ? { ...each, place } : each)),
-    });
+  protected movePin(id: string, place: PinPlace): void {
+    this.store.update({ tells: withPinMoved(this.store.content().tells, id, place) });
   }
 
   protected nameOf(tell: TellView | string): string {
@@ -163,11 +177,20 @@ export class TellEditor {
   }
 
   private genuineIn(text: string): string {
-    const words = text.trim().toLowerCase();
-    if (words.length < 5) return '';
-    const feature = (this.all()?.genuineFeatures ?? []).find(({ id }) =>
-      words.includes(id.replaceAll('-', ' ').replace(/s$/, '')),
-    );
-    return feature ? `${feature.id.replaceAll('-', ' ')}: ${feature.seen}` : '';
+    return genuineFeaturesNamed(text, this.all()?.genuineFeatures ?? [])
+      .map(({ id, seen }) => `${id.replaceAll('-', ' ')} (${seen.replace(/\.$/, '')})`)
+      .join(', ');
+  }
+}
+
+/** Halfway to the rim at twelve, or half up the edge below the obverse's top; none on details. */
+function startOf(side: PhotoSide): PinPlace | null {
+  switch (side) {
+    case 'detail':
+      return null;
+    case 'edge':
+      return { side, angleDegrees: 0, heightFraction: 0.5 };
+    default:
+      return { side, clockHours: 0, radiusFraction: 0.5 };
   }
 }

@@ -11,7 +11,7 @@ import { Router, provideRouter, withComponentInputBinding } from '@angular/route
 import { RouterTestingHarness } from '@angular/router/testing';
 import { WatchView } from '#shared/watches/watch-filter';
 
-import { NEW_ID } from '../new-id';
+import { NEW_ID } from '../../ui/new-id';
 import { watchRoutes } from '../watches.routes';
 
 const crowns: WatchView = {

@@ -16,7 +16,7 @@ import { StateMessage } from '../../ui/state-message';
 import { CatalogueNamesStore } from '../catalogue-names';
 import { filterFromQuery } from '../filter-query';
 import { MetalStart } from '../metal-start/metal-start';
-import { NEW_ID } from '../new-id';
+import { NEW_ID } from '../../ui/new-id';
 import { WatchEditor } from '../watch-editor/watch-editor';
 import { WatchRow } from '../watch-row/watch-row';
 import { proposedName } from '../watch-words';

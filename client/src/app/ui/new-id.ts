@@ -1,6 +1,6 @@
 import { InjectionToken } from '@angular/core';
 
-/** Makes the id of a new watch: a random UUID (RFC 9562, version 4). */
+/** Makes the id of a thing before it is sent: a random UUID (RFC 9562, version 4). */
 export const NEW_ID = new InjectionToken<() => string>('NEW_ID', {
   providedIn: 'root',
   factory: () => randomId,
