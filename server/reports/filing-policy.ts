@@ -1,6 +1,7 @@
 import type { FieldProblem } from '#shared/api-problem';
 import type { Disclosure } from '#shared/access/audience';
 import type { Measurement, Quantity, ReportContent } from '#shared/reports/report-content';
+import { countryCodes } from '#shared/reports/countries';
 import { suggestMethods } from '#shared/tells/taxonomy';
 
 /** What the registry knows of the things that a filed content names. */
@@ -29,7 +30,7 @@ const unitsOf: Readonly<Record<Quantity, readonly Measurement['unit'][]>> = {
   lowest_tone: ['Hz'],
 };
 
-const countries = new Intl.DisplayNames('en', { type: 'region', fallback: 'none' });
+const countries = new Set(countryCodes);
 const currencies = new Set(Intl.supportedValuesOf('currency'));
 const longestEmbargoYears = 5;
 
@@ -101,7 +102,7 @@ function checkSurfacing({ surfacing }: ReportContent, now: Date, refuse: Refuse)
       || date.getUTCFullYear() < 1800) {
     refuse('surfacing.surfacedOn', 'not_a_date');
   } else if (date.getTime() > latest) refuse('surfacing.surfacedOn', 'in_the_future');
-  if (countries.of(country) === undefined) refuse('surfacing.country', 'unknown');
+  if (!countries.has(country)) refuse('surfacing.country', 'unknown');
   if (price !== null && currency === null) refuse('surfacing.currency', 'required');
   if (currency !== null && !currencies.has(currency)) refuse('surfacing.currency', 'unknown');
 }
