@@ -52,7 +52,7 @@ import { SurfacingStep } from '../surfacing-step/surfacing-step';
     WhenPipe,
   ],
   providers: [DraftStore, PhotoShelf],
-  host: { class: 'tn-page' },
+  host: { class: 'tn-page', '[class.wide]': "step() === 'photos' && !filed()" },
   templateUrl: './filing-page.html',
   styleUrl: './filing-page.scss',
 })
@@ -189,8 +189,11 @@ export class FilingPage {
     }
   }
 
-  protected isMissingIn(step: FilingStep): boolean {
-    return this.store.missing().some((each) => each.step === step);
+  /** A tick for what is answered: not for what was offered and left, nor for the sending. */
+  protected isAnswered(step: FilingStep): boolean {
+    if (step === 'send') return false;
+    if (step === 'measure') return this.store.content().measurements.length > 0;
+    return !this.store.missing().some((each) => each.step === step);
   }
 
   private load(draftId: string | undefined, number: string | undefined) {

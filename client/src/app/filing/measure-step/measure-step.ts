@@ -6,24 +6,15 @@ import { MatInput } from '@angular/material/input';
 import { Measurement, Quantity } from '#shared/reports/report-content';
 
 import { Caution } from '../../ui/caution';
-import { quantityWords } from '../../ui/measurement-words';
 import { DraftStore } from '../draft-store';
-
-type Unit = Measurement['unit'];
-
-interface Instrument {
-  /** Its smallest step, in the unit it stands under. */
-  readonly step: number;
-  readonly words: string;
-}
+import { InstrumentsByUnit, ReadingEntry, ReadingRow, Unit } from '../reading-row/reading-row';
 
 interface Measurable {
   readonly quantity: Quantity;
-  /** Usual instruments by the unit they show. */
-  readonly instruments: Readonly<Partial<Record<Unit, readonly Instrument[]>>>;
+  readonly instruments: InstrumentsByUnit;
 }
 
-const scales: Measurable['instruments'] = {
+const scales: InstrumentsByUnit = {
   g: [
     { step: 1, words: $localize`kitchen scale, 1 g` },
     { step: 0.1, words: $localize`pocket scale, 0.1 g` },
@@ -43,7 +34,7 @@ const scales: Measurable['instruments'] = {
     { step: 0.001, words: $localize`scale, 0.001 oz t` },
   ],
 };
-const callipers: Measurable['instruments'] = {
+const callipers: InstrumentsByUnit = {
   mm: [
     { step: 1, words: $localize`ruler, 1 mm` },
     { step: 0.1, words: $localize`calliper, 0.1 mm` },
@@ -71,13 +62,15 @@ const measurables: readonly Measurable[] = [
   },
 ];
 
+/** Weight and diameter are what a member has at hand; the others are folded away. */
+const usualCount = 2;
 const reading = /^\d+([.,]\d+)?$/;
 
 /** What scale, calliper and magnet say; each is offered, none demanded. */
 @Component({
   selector: 'tn-measure-step',
   changeDetection: ChangeDetectionStrategy.OnPush,
-  imports: [Caution, MatFormFieldModule, MatInput, ReactiveFormsModule],
+  imports: [Caution, MatFormFieldModule, MatInput, ReactiveFormsModule, ReadingRow],
   templateUrl: './measure-step.html',
   styleUrl: '../step.scss',
 })
@@ -85,17 +78,18 @@ export class MeasureStep {
   private readonly store = inject(DraftStore);
   private readonly builder = inject(NonNullableFormBuilder);
 
-  protected readonly words = quantityWords;
-  protected readonly entries = measurables.map((measurable) => ({
-    quantity: measurable.quantity,
+  private readonly entries = measurables.map((measurable): ReadingEntry => ({
+    ...measurable,
     units: Object.keys(measurable.instruments) as Unit[],
-    instrumentsOf: (unit: Unit) => measurable.instruments[unit] ?? [],
     row: this.rowOf(measurable),
   }));
-  private readonly rows = this.entries.map(({ row }) => row);
+  protected readonly usual = this.entries.slice(0, usualCount);
+  protected readonly rare = this.entries.slice(usualCount);
+  /** Open where something is given there already. */
+  protected readonly opensRare = this.rare.some(({ row }) => row.controls.value.value !== '');
   protected readonly magnetic = this.builder.control(this.magneticAtStart());
   private readonly form = this.builder.group({
-    rows: this.builder.array(this.rows),
+    rows: this.builder.array(this.entries.map(({ row }) => row)),
     magnetic: this.magnetic,
   });
 
@@ -103,12 +97,7 @@ export class MeasureStep {
     this.form.valueChanges.pipe(takeUntilDestroyed()).subscribe(() => this.takeAnswers());
   }
 
-  /** A step of one unit says nothing in another. */
-  protected forgetInstrument(row: MeasureStep['rows'][number]): void {
-    row.controls.resolution.setValue('');
-  }
-
-  private rowOf({ quantity, instruments }: Measurable) {
+  private rowOf({ quantity, instruments }: Measurable): ReadingEntry['row'] {
     const given = this.store
       .content()
       .measurements.find((measurement) => measurement.quantity === quantity);
