@@ -18,7 +18,8 @@ export default defineConfig({
     timezoneId: 'Europe/London',
     actionTimeout: 15_000,
     navigationTimeout: 30_000,
-    trace: 'retain-on-failure',
+    // A trace of every page costs more than the pages; `--trace on` makes one where it is needed.
+    screenshot: 'only-on-failure',
     launchOptions: {
       executablePath: '/usr/bin/chromium',
       args: ['--no-sandbox', '--disable-background-networking', '--disable-component-update',

@@ -19,13 +19,11 @@ let number = '';
 
 test.beforeAll(async ({ registry }) => {
   const { owner } = registry.store;
-  const [larkmoor, saltmarsh, ember] = await Promise.all(
-    ['larkmoor', 'saltmarsh', 'ember-vale'].map((slug) => addClub(owner, slug)));
-  if (!larkmoor || !saltmarsh || !ember) throw new Error('three clubs are needed');
-  member = await addMember(owner, larkmoor);
-  moderator = await addMember(owner, saltmarsh, 'moderator');
-  secondModerator = await addMember(owner, ember, 'moderator');
-  subscriber = await addPerson(owner, { club: saltmarsh, roles: ['subscriber'] });
+  const club = await addClub(owner);
+  member = await addMember(owner, await addClub(owner));
+  moderator = await addMember(owner, club, 'moderator');
+  secondModerator = await addMember(owner, await addClub(owner), 'moderator');
+  subscriber = await addPerson(owner, { club, roles: ['subscriber'] });
 });
 
 test('a subscriber watches silver, at once', async ({ browser, registry }) => {

@@ -32,8 +32,8 @@ export interface World {
 /** Builds it through the doors that people use, where there is one. */
 export async function buildWorld(registry: RunningRegistry): Promise<World> {
   const { owner } = registry.store;
-  const club = await addClub(owner, 'larkmoor');
-  const other = await addClub(owner, 'saltmarsh');
+  const club = await addClub(owner);
+  const other = await addClub(owner);
   const member = await addMember(owner, club, 'secretary');
   const moderator = await addMember(owner, other, 'moderator');
   const registrar = await addPerson(owner, { isRegistrar: true });
