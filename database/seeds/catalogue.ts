@@ -12,15 +12,27 @@ export interface SeededCatalogue {
   readonly searchWords: number;
 }
 
+export interface CatalogueFiles {
+  readonly types: readonly CatalogueCoinType[];
+  readonly tells: CatalogueTells;
+}
+
 const rowsPerStatement = 500;
+
+/** What the data files say; throws with the file's name where one is wrong. */
+export async function readCatalogue(): Promise<CatalogueFiles> {
+  const [types, tells] = await Promise.all([readCoinTypes(), readTells()]);
+  return { types, tells };
+}
 
 /**
  * Brings the catalogue in the database to what the data files say, as the owner of the tables.
  * Safe to run again. A changed standard becomes a new revision, since reports point at the one
  * they were filed under; a type or tell that a file no longer has stays for the same reason.
  */
-export async function seedCatalogue(knex: Knex): Promise<SeededCatalogue> {
-  const [types, tells] = await Promise.all([readCoinTypes(), readTells()]);
+export async function seedCatalogue(knex: Knex,
+  files?: CatalogueFiles): Promise<SeededCatalogue> {
+  const { types, tells } = files ?? await readCatalogue();
   return knex.transaction(async (trx) => {
     // Two starts at once would race for the same revision number.
     await trx.raw('select pg_advisory_xact_lock(hashtext(?))', ['touchneedle.catalogue']);
