@@ -83,7 +83,7 @@ async function hashOfSchema(): Promise<string> {
   const hash = createHash('sha256');
   for (const folder of ['migrations', 'catalogue', 'seeds']) {
     const directory = join(import.meta.dirname, '../../database', folder);
-    for (const file of (await readdir(directory)).sort()) {
+    for (const file of (await readdir(directory, { recursive: true })).sort()) {
       if (/\.(ts|json)$/.test(file)) hash.update(file).update(await readFile(join(directory, file)));
     }
   }
