@@ -89,7 +89,8 @@ export function boundedCircle({ x, y, radius }: Circle): Circle {
 /** Tenths of a degree, 0 ≤ d < 360. */
 export function wrappedDegrees(degrees: number): number {
   const tenths = Math.round(degrees * 10) % 3600;
-  return (tenths < 0 ? tenths + 3600 : tenths) / 10;
+  // The second turn makes -0 a 0, too.
+  return ((tenths + 3600) % 3600) / 10;
 }
 
 /** Rounded to ten-thousandths, which is finer than a pixel of the largest rendition. */
