@@ -22,8 +22,8 @@ import { ReportNumber } from '../../ui/report-number';
         <p i18n>Thank you: your report is filed. Quote the number above when you speak of it.</p>
       }
       <p i18n>
-        A moderator who is not you reads it, most often within a week. You are told by mail and on
-        this site, whatever they decide. Until then you may withdraw it.
+        A moderator reads it next; nobody decides on a report of their own. You are told by mail
+        and on this site, whatever they decide. Until then you may withdraw it.
       </p>
       <p i18n>Keep the piece as it is. Never sell it on, and never post it without legal advice.</p>
       <div class="tn-actions">

@@ -127,6 +127,25 @@ describe('PhotosStep', () => {
     expect(who, 'nobody widens what the taxonomy narrows').not.toContain('public');
   });
 
+  it('holds a pin of the edge by angle and height', async () => {
+    await openReady();
+    const shows = page.querySelector<HTMLSelectElement>('#field-obverse');
+    if (!shows) throw new Error('the side has no field');
+    shows.value = 'edge';
+    shows.dispatchEvent(new Event('change'));
+    await fixture.whenStable();
+    expect(pin(), 'a pin of the face does not fit the edge').toBeUndefined();
+    expect(store.content().photos[0]).toMatchObject({ side: 'edge', circle: null });
+    button('Add a pin without tapping').click();
+    await fixture.whenStable();
+    const [angle] = fields();
+    if (!angle) throw new Error('the pin has no fields');
+    angle.value = '359.97';
+    angle.dispatchEvent(new Event('change'));
+    await fixture.whenStable();
+    expect(pin()?.place).toEqual({ side: 'edge', angleDegrees: 0, heightFraction: 0.5 });
+  });
+
   it('warns where a feature of genuine pieces is described as a tell', async () => {
     await openReady();
     const search = await loader.getHarness(MatAutocompleteHarness);
