@@ -6,7 +6,8 @@ const database = knex(configuration);
 try {
   const [, names] = await (process.argv[2] === 'down' ? database.migrate.down()
     : database.migrate.latest());
-  process.stdout.write(names.length ? `Migrated: ${names.join(', ')}\n` : 'Schema is up to date.\n');
+  process.stdout.write(names.length ? `Migrated: ${names.join(', ')}\n`
+    : 'Schema is up to date.\n');
 } finally {
   await database.destroy();
 }

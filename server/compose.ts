@@ -15,16 +15,22 @@ import type { Route } from './http/route';
 import { createPhotoDecoder } from './images/photo-decoder';
 import { createDiskPhotoStore } from './images/photo-store';
 import { startJobQueue } from './jobs/job-queue';
-import { noticesRoutes } from './notices/notices';
+import { noticesRoutes, tellReporter } from './notices/notices';
 import { photosRoutes } from './photos/photos-routes';
 import { createPhotosService } from './photos/photos-service';
 import { mailLedgerRoutes } from './registry/mail-ledger-routes';
 import { filingRoutes } from './reports/filing-routes';
 import { createFilingService } from './reports/filing-service';
-import { createReportSearchService } from './reports/report-search-service';
+import { countReports } from './reports/report-search-queries';
+import { countedAtMost, createReportSearchService } from './reports/report-search-service';
 import { reportsRoutes } from './reports/reports-routes';
 import { createReportsService } from './reports/reports-service';
 import { createKeptTotals } from './reports/search-totals';
+import { recordPublication } from './review/review-queries';
+import { reviewRoutes } from './review/review-routes';
+import { createReviewService } from './review/review-service';
+import { watchRoutes } from './watches/watch-routes';
+import { createWatchService } from './watches/watch-service';
 
 export interface Parts {
   readonly config: Config;
@@ -53,6 +59,21 @@ export async function composeRoutes(
   const filing = createFilingService(config, () => new Date());
   const search = createReportSearchService(createKeptTotals(Date.now));
   const queue = await startJobQueue(config.databaseUrl, logger, 'enqueue');
+  const review = createReviewService({
+    viewNewest: reports.viewNewest,
+    tellReporter,
+    announcePublication: async (trx, publication) => {
+      await recordPublication(trx, publication);
+      await queue.enqueue(trx, 'match-watches', publication,
+        publication.notBefore ? { startAfter: publication.notBefore } : {});
+    },
+  });
+  const watches = createWatchService({
+    countMatches: async (trx, filter) => {
+      const count = await countReports(trx, filter);
+      return { count: Math.min(count, countedAtMost), more: count > countedAtMost };
+    },
+  });
   return {
     routes: [
       ...healthRoutes(database),
@@ -63,6 +84,8 @@ export async function composeRoutes(
       ...draftsRoutes(database, createDraftsService()),
       ...reportsRoutes(database, reports, search),
       ...filingRoutes(database, filing, reports),
+      ...reviewRoutes(database, review),
+      ...watchRoutes(database, watches, config),
       ...noticesRoutes(database),
       ...mailLedgerRoutes(database),
     ],

@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto';
-import type { ClubMemberView, ClubSummary, ClubView, InvitationView } from '#shared/accounts/session';
+import type { ClubMemberView, ClubSummary, ClubView,
+  InvitationView } from '#shared/accounts/session';
 import type { ClubRole } from '#shared/access/audience';
 import { accountLinkHash, accountLinkToken } from '../accounts/account-link';
 import { addAccountLink } from '../accounts/account-links-queries';

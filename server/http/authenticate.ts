@@ -41,5 +41,6 @@ export function authenticate(database: Database): RequestHandler {
 
 /** Anyone signed in counts as a subscriber; a member can do what a subscriber can. */
 function rolesOf(held: readonly Role[], isRegistrar: boolean): readonly Role[] {
-  return [...new Set<Role>(['subscriber', ...held, ...(isRegistrar ? ['registrar' as const] : [])])];
+  return [...new Set<Role>(['subscriber', ...held,
+    ...(isRegistrar ? ['registrar' as const] : [])])];
 }

@@ -74,10 +74,16 @@ function toFieldProblems(issue: z.core.$ZodIssue, prefix: string): FieldProblem[
       return [{ field: at([]), code: issue.input === undefined ? 'required' : 'wrong_type' }];
     case 'invalid_value':
       return [{ field: at([]), code: 'not_one_of' }];
+    case 'invalid_format':
     case 'custom':
-      return [{ field: at([]), code: issue.message || 'invalid' }];
+      return [{ field: at([]), code: codeOf(issue.message) }];
     default:
       return [{ field: at([]), code: 'invalid' }];
   }
 }
 
+
+/** Schemas of ours say what is wrong in a code; what zod itself says is a sentence. */
+function codeOf(message: string): string {
+  return /^[a-z][a-z_]*$/.test(message) ? message : 'invalid';
+}

@@ -60,8 +60,8 @@ interface LedgerRow {
 async function listLedger(
   trx: Transaction, query: z.output<typeof ledgerQuery>,
 ): Promise<z.output<typeof ledgerPage>> {
-  const rows: LedgerRow[] = await trx('mail').select('id', 'kind', 'address', 'state', 'message_id', 'attempts',
-    'not_before', 'created_at', 'answer',
+  const rows: LedgerRow[] = await trx('mail').select('id', 'kind', 'address', 'state',
+    'message_id', 'attempts', 'not_before', 'created_at', 'answer',
     trx.raw('(select count(*) from mail_item i where i.mail_id = mail.id) as items'))
     .modify((builder) => {
       if (query.state) builder.where({ state: query.state });

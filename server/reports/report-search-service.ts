@@ -9,7 +9,7 @@ import { mendText } from './search-words-queries';
 import type { KeptTotals } from './search-totals';
 
 /** Hits are counted up to here; the screen says "10,000+" above. */
-const countedAtMost = 10_000;
+export const countedAtMost = 10_000;
 
 const noFacets = (): FacetCounts => ({ coinType: [], metal: [], kind: [], tell: [], channel: [],
   country: [], confidence: [] });

@@ -137,3 +137,11 @@ export async function findReporter(
   const { namedClubs, ...reporter } = row;
   return { reporter: { ...reporter, name: reporter.name ?? '' }, namedClubs };
 }
+
+/** Puts a publication into the stream of events that feeds and live pages read. */
+export async function recordPublication(
+  trx: Transaction, publication: { readonly reportId: string; readonly publicationId: string },
+): Promise<void> {
+  await trx('registry_event').insert({ kind: 'published', report_id: publication.reportId,
+    publication_id: publication.publicationId });
+}

@@ -16,11 +16,12 @@ export interface ReviewedReport {
   readonly published_audience: Audience | null;
   readonly current_version: number;
   readonly row_version: number;
+  readonly embargo_until: Date | null;
 }
 
 const reportColumns = ['report.id', 'report.number', 'report.author_id', 'report.club_id',
   'report.state', 'report.audience', 'report.published_audience', 'report.current_version',
-  'report.row_version'];
+  'report.row_version', 'report.embargo_until'];
 
 /** The report where the actor reviews it; with `lock`, held until the transaction ends. */
 export function findReviewedReport(

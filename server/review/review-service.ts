@@ -23,7 +23,14 @@ export interface ReviewNeeds {
     readonly cause: string; readonly parameters: Readonly<Record<string, string | number>>;
   }): Promise<void>;
   /** Wakes the matching of watches for a new publication. */
-  announcePublication(trx: Transaction, reportId: string, publicationId: string): Promise<void>;
+  announcePublication(trx: Transaction, publication: NewPublication): Promise<void>;
+}
+
+export interface NewPublication {
+  readonly reportId: string;
+  readonly publicationId: string;
+  /** End of the embargo, before which nobody is told; null where there is none. */
+  readonly notBefore: Date | null;
 }
 
 const noticeOf = {
@@ -152,7 +159,8 @@ export function createReviewService(needs: ReviewNeeds) {
       published_audience: what.audience, published_version: report.current_version,
       decided_at: trx.fn.now() });
     await trx.raw('select renew_report_search(?)', [report.id]);
-    await needs.announcePublication(trx, report.id, publicationId);
+    await needs.announcePublication(trx, { reportId: report.id, publicationId,
+      notBefore: report.embargo_until });
   }
 }
 

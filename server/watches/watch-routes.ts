@@ -2,7 +2,8 @@ import express from 'express';
 import type { Config } from '../config';
 import { system, type Database, type Transaction } from '../db/database';
 import { NotFound } from '../errors';
-import { noContent, ok, publicRoute, requireRole, route, signedIn, type Route } from '../http/route';
+import { noContent, ok, publicRoute, requireRole, route, signedIn,
+  type Route } from '../http/route';
 import { readUnsubscribeToken } from './unsubscribe-token';
 import { oneClickBody, unsubscribeParams, unsubscribeView, watchList, watchParams, watchPreview,
   watchPreviewRequest, watchSave, watchView } from './watch-schemas';

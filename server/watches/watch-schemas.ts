@@ -1,5 +1,6 @@
 import type { FacetName } from '#shared/reports/report-view';
-import { cadences, type WatchFilter, type WatchSave, type WatchView } from '#shared/watches/watch-filter';
+import { cadences, type WatchFilter, type WatchSave,
+  type WatchView } from '#shared/watches/watch-filter';
 import { z } from '../http/openapi-zod';
 
 const facet = z.array(z.string().min(1).max(120)).max(50).optional();

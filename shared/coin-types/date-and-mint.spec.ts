@@ -9,7 +9,8 @@ const issue = (year: number, mintMark: string,
 const table: DateTable = { complete: true, through: 1920, anyMintMark: false,
   source: 'a table', sourceKind: 'secondary' };
 const issues = [issue(1900, ''), issue(1900, 'D'), issue(1901, 'D'),
-  issue(1902, '', 'few_known', 4), issue(1903, '', 'none_released', 0), issue(1904, 'S', 'proof_only'),
+  issue(1902, '', 'few_known', 4), issue(1903, '', 'none_released', 0),
+  issue(1904, 'S', 'proof_only'),
   issue(1905, '', 'never_struck'), issue(1906, 'P')];
 
 describe('findDateAndMint', () => {

@@ -145,7 +145,7 @@ export interface DraftSave {
   readonly content: DraftContent;
 }
 
-/** `POST /api/reports`: `id` is the draft's, made by the client, so that sending twice makes one. */
+/** `POST /api/reports`: `id` is the draft's, made by the client: sending twice makes one. */
 export interface FileRequest {
   readonly id: string;
   readonly content: ReportContent;

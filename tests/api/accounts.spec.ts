@@ -107,7 +107,8 @@ describe('mailed links', () => {
         expect((await client.post('/api/registrations', { email, displayName: 'New' })).status)
           .toBe(202);
       }
-      const link = await app.store.owner('account_link').where({ email: 'new@example.org' }).first();
+      const link = await app.store.owner('account_link').where({ email: 'new@example.org' })
+        .first();
       const token = accountLinkToken(link.id, app.config.mailTokenKey);
       const short = await client.post(`/api/account-links/${token}`, { password: 'too short' });
       expect(short.status).toBe(422);

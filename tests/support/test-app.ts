@@ -49,6 +49,7 @@ export async function startTestApp(
     REPORT_NUMBER_KEY: 'n'.repeat(32),
     MAIL_TOKEN_KEY: 'm'.repeat(32),
     PHOTO_DIRECTORY: photoDirectory,
+    RATE_LIMITS: 'off',
     ...overrides,
   });
   const log: LogLine[] = [];

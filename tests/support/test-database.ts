@@ -84,7 +84,8 @@ async function hashOfSchema(): Promise<string> {
   for (const folder of ['migrations', 'catalogue', 'seeds']) {
     const directory = join(import.meta.dirname, '../../database', folder);
     for (const file of (await readdir(directory, { recursive: true })).sort()) {
-      if (/\.(ts|json)$/.test(file)) hash.update(file).update(await readFile(join(directory, file)));
+      if (!/\.(ts|json)$/.test(file)) continue;
+      hash.update(file).update(await readFile(join(directory, file)));
     }
   }
   return hash.digest('hex').slice(0, 16);
