@@ -9,6 +9,7 @@ import { createAccountMailComposers } from './mail/account-mails';
 import { createMailSender } from './mail/mail-sender';
 import { createMailTransport } from './mail/mail-transport';
 import { findCards, nameFilterValues } from './reports/report-card-queries';
+import { findFittingWords } from './reports/report-search-queries';
 import { matchPublication } from './watches/watch-matching';
 
 /** How often the ledger is looked at where nothing wakes it. */
@@ -25,7 +26,8 @@ export async function composeWorker({ config, database, logger }: Parts): Promis
   const sender = createMailSender({
     database, transport, logger, messageIdDomain: domain,
     composers: {
-      digest: createDigestComposer(config, { findCards, nameValues: nameFilterValues }),
+      digest: createDigestComposer(config,
+        { findCards, nameValues: nameFilterValues, findFittingWords }),
       ...createAccountMailComposers(config, (id) => accountLinkToken(id, config.mailTokenKey)),
     },
   });

@@ -27,6 +27,10 @@ export interface DigestNeeds {
   findCards(trx: Transaction, reportIds: readonly string[]): Promise<Map<string, ReportCard>>;
   /** Names of values of filters, such as a tell's, as the actor may read them. */
   nameValues(trx: Transaction, reasons: readonly MatchReason[]): Promise<Map<string, string>>;
+  /** Which of the reports hold which of the words for the actor, as `report-id words`. */
+  findFittingWords(
+    trx: Transaction, reportIds: readonly string[], texts: readonly string[],
+  ): Promise<Set<string>>;
 }
 
 /** Writes a digest as its recipient may read it now; what they may no longer see is left out. */
@@ -41,9 +45,12 @@ export function createDigestComposer(config: Config, needs: DigestNeeds): MailCo
     const wanted = await liveWatches(trx, mail.person_id);
     await continueAs(trx, { kind: 'person', id: mail.person_id });
     const cards = await needs.findCards(trx, frozen.map((item) => item.report_id));
+    const words = await needs.findFittingWords(trx, [...cards.keys()],
+      frozen.flatMap((item) => textsOf(item.reasons)));
     const items: DigestItem[] = frozen.flatMap((item) => {
       const card = cards.get(item.report_id);
-      const reasons = item.reasons.filter((each: WatchReasons) => wanted.has(each.watchId));
+      const reasons = card ? item.reasons.filter(({ watchId }: WatchReasons) => wanted.has(watchId))
+        .flatMap((each: WatchReasons) => stillKnown(each, item.report_id, card, words)) : [];
       return card && reasons.length ? [{ report_id: item.report_id, reasons, card }] : [];
     });
     if (!items.length) return undefined;
@@ -51,6 +58,24 @@ export function createDigestComposer(config: Config, needs: DigestNeeds): MailCo
       item.reasons.flatMap((each) => each.reasons)));
     return writeDigest(config, mail, items, names, person);
   };
+}
+
+const textsOf = (watches: readonly WatchReasons[]): string[] => watches.flatMap(({ reasons }) =>
+  reasons.filter(({ kind }) => kind === 'text').map(({ value }) => value));
+
+/**
+ * The reasons as far as the recipient may know them now: whoever left their club since the match
+ * must not learn from a mail which tells or words of the account the clubs know.
+ */
+function stillKnown(
+  watch: WatchReasons, reportId: string, card: ReportCard, words: ReadonlySet<string>,
+): WatchReasons[] {
+  const isKnown = ({ kind, value }: MatchReason): boolean =>
+    kind === 'tell' ? card.tells.some(({ id }) => id === value)
+      : kind !== 'text' || words.has(`${reportId} ${value}`);
+  const known = watch.reasons.filter(isKnown);
+  const isLost = watch.reasons.some(({ kind }) => !known.some((reason) => reason.kind === kind));
+  return isLost ? [] : [{ ...watch, reasons: known }];
 }
 
 async function liveWatches(trx: Transaction, personId: string): Promise<Set<string>> {

@@ -39,6 +39,21 @@ export function applyFilter(
   return query;
 }
 
+/** Which of the reports hold which of the words for the actor, as `report-id words`. */
+export async function findFittingWords(
+  trx: Transaction, reportIds: readonly string[], texts: readonly string[],
+): Promise<Set<string>> {
+  const asked = [...new Set(texts)];
+  if (!asked.length || !reportIds.length) return new Set();
+  const { rows } = await trx.raw(
+    `select s.report_id || ' ' || asked.text as fitting
+       from unnest(?::text[], ?::boolean[]) as asked (text, has_words)
+       join visible_report_search s on s.report_id = any (?::uuid[])
+        and (not asked.has_words or s.words @@ search_query(asked.text))`,
+    [asked, asked.map(hasWords), [...reportIds]]);
+  return new Set(rows.map((row: { fitting: string }) => row.fitting));
+}
+
 /** True where the filter narrows anything, other than by the facet `except`. */
 export function narrows(filter: WatchFilter, except?: FacetName): boolean {
   return hasWords(filter.text ?? '') || filter.yearFrom !== undefined
@@ -47,7 +62,7 @@ export function narrows(filter: WatchFilter, except?: FacetName): boolean {
 }
 
 /** Text of nothing but punctuation has no words and narrows nothing. */
-function hasWords(text: string): boolean {
+export function hasWords(text: string): boolean {
   return /[\p{L}\p{N}]/u.test(text);
 }
 
