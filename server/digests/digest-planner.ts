@@ -52,15 +52,21 @@ async function reserveDigest(trx: Transaction, personId: string, due: readonly {
   }).onConflict('cause').ignore().returning('id');
   // The window has its mail: what came late waits for the next one.
   if (!mail) return false;
+  // Only what is due counts towards the limit: alerts of a removed or weekly watch, however many,
+  // must not keep those of another from ever being reached.
   const { rows } = await trx.raw(
-    `with taken as (
+    `with due as (
+       select a.id, a.report_id, a.made_at from alert a join watch w on w.id = a.watch_id
+         join unnest(?::text[], ?::timestamptz[]) as d (cadence, boundary)
+           on d.cadence = w.cadence
+        where a.person_id = ? and a.mail_id is null and w.deleted_at is null
+          and (w.paused_until is null or w.paused_until <= now())
+          and (w.cadence = 'at_once' or a.made_at < d.boundary)),
+     chosen as (select report_id from due group by report_id order by min(made_at) limit ?),
+     taken as (
        update alert set mail_id = ? where id in (
-         select a.id from alert a join watch w on w.id = a.watch_id
-          where a.person_id = ? and a.mail_id is null and w.deleted_at is null
-            and (w.paused_until is null or w.paused_until <= now())
-            and (w.cadence = any (?::text[]) and (w.cadence = 'at_once' or a.made_at < ?))
-            and a.report_id in (select b.report_id from alert b where b.person_id = ?
-              and b.mail_id is null group by b.report_id order by min(b.made_at) limit ?)
+         select a.id from alert a where a.mail_id is null
+            and a.id in (select due.id from due join chosen using (report_id))
           for update of a skip locked)
        returning watch_id, report_id, publication_id, reasons, made_at)
      insert into mail_item (mail_id, report_id, publication_id, position, reasons)
@@ -70,8 +76,8 @@ async function reserveDigest(trx: Transaction, personId: string, due: readonly {
          'reasons', t.reasons) order by w.created_at)
        from taken t join watch w on w.id = t.watch_id group by t.report_id
      returning report_id`,
-    [mail.id, personId, due.map(({ cadence }) => cadence), latest.boundary, personId, itemsAtMost,
-      mail.id]);
+    [due.map(({ cadence }) => cadence), due.map(({ boundary }) => boundary), personId,
+      itemsAtMost, mail.id, mail.id]);
   if (!rows.length) {
     // Another planner took them between the two statements.
     await trx('mail').where({ id: mail.id }).update({ state: 'dropped', frozen_at: trx.fn.now(),
