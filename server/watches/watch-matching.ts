@@ -1,6 +1,7 @@
 import type { WatchFilter } from '#shared/watches/watch-filter';
 import { matchReasons, type ReportFacts } from '#shared/watches/watch-match';
 import type { Transaction } from '../db/database';
+import { hasWords } from '../reports/report-search-queries';
 
 const batch = 2000;
 
@@ -8,7 +9,8 @@ interface WatchRow {
   readonly id: string;
   readonly person_id: string;
   readonly filter: WatchFilter;
-  readonly in_club: boolean;
+  /** Whether the owner reads what the clubs read: of a club, or the registrar. */
+  readonly reads_as_club: boolean;
 }
 
 /**
@@ -37,7 +39,7 @@ async function alertBatch(
 ): Promise<number> {
   const fittingWords = await readFittingWords(trx, reportId, watches);
   const matched = watches.flatMap((watch) => {
-    const tier = watch.in_club ? 'clubs' : 'public';
+    const tier = watch.reads_as_club ? 'clubs' : 'public';
     const facts = tiers.get(tier);
     const reasons = facts && matchReasons(watch.filter, facts,
       fittingWords.has(`${tier} ${watch.filter.text ?? ''}`));
@@ -73,13 +75,14 @@ async function readFacts(
 
 /** Live watches, in order of id; the reporter is not told of their own report. */
 function readWatches(trx: Transaction, reportId: string, after: string): Promise<WatchRow[]> {
-  return trx('watch').select('watch.id', 'watch.person_id', 'watch.filter',
-    trx.raw(`exists (select from membership m join club c on c.id = m.club_id
-      where m.person_id = watch.person_id and m.during @> now() and c.closed_at is null)
-      as in_club`))
-    .whereNull('deleted_at').where('watch.id', '>', after)
-    .whereRaw('(paused_until is null or paused_until <= now())')
-    .whereRaw('person_id <> (select r.author_id from report r where r.id = ?)', [reportId])
+  return trx('watch').join('person', 'person.id', 'watch.person_id')
+    .select('watch.id', 'watch.person_id', 'watch.filter',
+      trx.raw(`person.is_registrar or exists (select from membership m
+        join club c on c.id = m.club_id and c.closed_at is null
+        where m.person_id = watch.person_id and m.during @> now()) as reads_as_club`))
+    .whereNull('watch.deleted_at').where('watch.id', '>', after)
+    .whereRaw('(watch.paused_until is null or watch.paused_until <= now())')
+    .whereRaw('watch.person_id <> (select r.author_id from report r where r.id = ?)', [reportId])
     .orderBy('watch.id').limit(batch);
 }
 
@@ -88,10 +91,13 @@ async function readFittingWords(
 ): Promise<Set<string>> {
   const texts = [...new Set(watches.flatMap(({ filter }) => filter.text ? [filter.text] : []))];
   if (!texts.length) return new Set();
+  // What has no words narrows no search, so it narrows no watch.
+  const wordless = texts.filter((text) => !hasWords(text));
   const { rows } = await trx.raw(
     `select s.tier || ' ' || asked.text as fitting
        from unnest(?::text[]) as asked (text)
        join visible_report_search s on s.report_id = ? and s.words @@ search_query(asked.text)`,
     [texts, reportId]);
-  return new Set(rows.map((row: { fitting: string }) => row.fitting));
+  return new Set([...rows.map((row: { fitting: string }) => row.fitting),
+    ...wordless.flatMap((text) => [`clubs ${text}`, `public ${text}`])]);
 }
