@@ -298,7 +298,8 @@ describe('the link that stops', () => {
       const person = await subscriber();
       await room.addWatch(person);
       const { raw } = await deliver(await publish('public'), person);
-      const address = /List-Unsubscribe: <([^>]+)>/.exec(raw.replace(/\r\n[ \t]+/g, ' '))?.[1] ?? '';
+      const address = /List-Unsubscribe: <([^>]+)>/
+        .exec(raw.replace(/\r\n[ \t]+/g, ' '))?.[1] ?? '';
       await fetch(address);
       await fetch(address.replace('/unsubscribe/', '/api/unsubscribe/'));
       await fetch(address, { method: 'HEAD' });
