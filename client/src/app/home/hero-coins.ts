@@ -63,16 +63,16 @@ import { Mark } from '../ui/mark';
       border-radius: 50%;
     }
     .one {
-      top: 28%;
-      left: 22%;
+      top: 21.2%;
+      left: 20.7%;
     }
     .two {
-      top: 62%;
-      left: 57%;
+      top: 53.6%;
+      left: 70.6%;
     }
     .three {
-      top: 80%;
-      left: 60%;
+      top: 62.3%;
+      left: 29.1%;
     }
     tn-mark {
       display: block;
