@@ -4,7 +4,8 @@ import type { Transaction } from '../db/database';
 /** A claim is good for longer than any SMTP exchange with the time-outs of the transport. */
 const leaseSeconds = 30;
 const attemptsAtMost = 12;
-const batch = 10;
+/** How many mails one run claims and hands to SMTP side by side. */
+export const mailsAtOnce = 10;
 
 export interface ClaimableMail {
   readonly id: string;
@@ -46,7 +47,7 @@ export async function markAbandoned(trx: Transaction): Promise<number> {
 export function lockDue(trx: Transaction): Promise<ClaimableMail[]> {
   return trx('mail').select('id', 'kind', 'person_id', 'address', 'message_id', 'parameters',
     'attempts').where({ state: 'ready' }).where('not_before', '<=', trx.fn.now())
-    .orderBy(['not_before', 'id']).limit(batch).forUpdate().skipLocked();
+    .orderBy(['not_before', 'id']).limit(mailsAtOnce).forUpdate().skipLocked();
 }
 
 /** Step 3: from here on the body may leave. */

@@ -1,6 +1,6 @@
 import type { Readable } from 'node:stream';
 import nodemailer from 'nodemailer';
-import type { DeliveryOutcome } from './mail-ledger';
+import { mailsAtOnce, type DeliveryOutcome } from './mail-ledger';
 
 export interface ComposedMail {
   readonly to: string;
@@ -22,7 +22,9 @@ export interface MailTransport {
 export function createMailTransport(smtpUrl: string, from: string): MailTransport {
   const bodies = new Map<string, Readable>();
   const transport = nodemailer.createTransport({
-    url: smtpUrl, pool: true, maxConnections: 4, maxMessages: 1000,
+    // A connection for each mail of a batch, so that none waits out its claim behind others; and
+    // one try a claim: whoever tries again must ask first whether the recipient may still read it.
+    url: smtpUrl, pool: true, maxConnections: mailsAtOnce, maxMessages: 1000, maxRequeues: 0,
     connectionTimeout: 5_000, greetingTimeout: 5_000, socketTimeout: 20_000,
   });
   transport.use('stream', (mail, done) => {
