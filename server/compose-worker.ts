@@ -3,11 +3,14 @@ import type { Parts } from './compose';
 import { system } from './db/database';
 import { createDigestComposer } from './digests/digest-composer';
 import { planDigests } from './digests/digest-planner';
+import { createPhotoDecoder } from './images/photo-decoder';
+import { openPhotoFolders } from './images/photo-store';
 import { startJobQueue } from './jobs/job-queue';
 import { startTicking } from './jobs/ticker';
 import { createAccountMailComposers } from './mail/account-mails';
 import { createMailSender } from './mail/mail-sender';
 import { createMailTransport } from './mail/mail-transport';
+import { createPhotosService } from './photos/photos-service';
 import { findCards, nameFilterValues } from './reports/report-card-queries';
 import { findFittingWords } from './reports/report-search-queries';
 import { matchPublication } from './watches/watch-matching';
@@ -44,9 +47,13 @@ export async function composeWorker({ config, database, logger }: Parts): Promis
       }
       ticker.wake();
     });
+  const decoder = createPhotoDecoder();
+  const photos = createPhotosService({ database, decoder,
+    ...openPhotoFolders(config.photoDirectory) });
   await queue.boss.work('clean-up', async () => {
     await database.asActor(system, (trx) =>
       trx('session').where('expire', '<', trx.fn.now()).delete());
+    while (await photos.removeUnused() > 0) { /* a batch at a time, until none is left */ }
   });
   await queue.boss.schedule('clean-up', '17 3 * * *');
   return {
@@ -54,6 +61,7 @@ export async function composeWorker({ config, database, logger }: Parts): Promis
       await queue.stop();
       await ticker.stop();
       transport.close();
+      decoder.close();
     },
   };
 }

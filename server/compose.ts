@@ -1,4 +1,3 @@
-import { join } from 'node:path';
 import type { Logger } from 'pino';
 import { accountsRoutes } from './accounts/accounts-routes';
 import { createAccountsService } from './accounts/accounts-service';
@@ -13,7 +12,7 @@ import { createDraftsService } from './drafts/drafts-service';
 import { healthRoutes } from './health-routes';
 import type { Route } from './http/route';
 import { createPhotoDecoder } from './images/photo-decoder';
-import { createDiskPhotoStore } from './images/photo-store';
+import { openPhotoFolders } from './images/photo-store';
 import { startJobQueue } from './jobs/job-queue';
 import { noticesRoutes, tellReporter } from './notices/notices';
 import { photosRoutes } from './photos/photos-routes';
@@ -50,11 +49,9 @@ export async function composeRoutes(
 ): Promise<ComposedRoutes> {
   const accounts = createAccountsService(config, createPasswords(config.environment));
   const clubs = createClubsService(config);
-  const incoming = join(config.photoDirectory, 'incoming');
+  const folders = openPhotoFolders(config.photoDirectory);
   const decoder = createPhotoDecoder();
-  const photos = createPhotosService({
-    database, decoder, incoming, store: createDiskPhotoStore(join(config.photoDirectory, 'kept')),
-  });
+  const photos = createPhotosService({ database, decoder, ...folders });
   const reports = createReportsService();
   const filing = createFilingService(config, () => new Date());
   const search = createReportSearchService(createKeptTotals(Date.now));
@@ -80,7 +77,7 @@ export async function composeRoutes(
       ...accountsRoutes(database, accounts, config),
       ...clubsRoutes(database, clubs),
       ...catalogueRoutes(database),
-      ...photosRoutes(photos, incoming),
+      ...photosRoutes(photos, folders.incoming),
       ...draftsRoutes(database, createDraftsService()),
       ...reportsRoutes(database, reports, search),
       ...filingRoutes(database, filing, reports),

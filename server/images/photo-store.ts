@@ -16,6 +16,14 @@ export function newObjectKey(): string {
   return randomBytes(16).toString('hex');
 }
 
+/** The folders that server and worker share: what is kept, and what is on its way. */
+export function openPhotoFolders(
+  directory: string,
+): { readonly store: PhotoStore; readonly incoming: string } {
+  return { store: createDiskPhotoStore(join(directory, 'kept')),
+    incoming: join(directory, 'incoming') };
+}
+
 /** Files below `root`, in folders of two levels so that none grows large. */
 export function createDiskPhotoStore(root: string): PhotoStore {
   function pathOf(key: string): string {
