@@ -1,8 +1,12 @@
+import { setTimeout as delay } from 'node:timers/promises';
 import type { Logger } from 'pino';
 import { continueAs, system, type Database, type Transaction } from '../db/database';
 import { freezeReserved, lockDue, markAbandoned, markDropped, markSending, recordOutcome,
-  type ClaimableMail } from './mail-ledger';
+  type ClaimableMail, type DeliveryOutcome } from './mail-ledger';
 import type { ComposedMail, MailTransport } from './mail-transport';
+
+/** Some 13 s of waiting in all, after which the claim of 30 s has not run out. */
+const attemptsToRecord = 8;
 
 /**
  * Writes a mail as its recipient may read it at this moment, in the transaction that claims it;
@@ -49,11 +53,29 @@ export function createMailSender(parts: {
           logger.warn({ mailId: mail.id, kind: outcome.kind, answer: outcome.answer },
             'mail not sent');
         }
-        await database.asActor(system, (trx) => recordOutcome(trx, mail, token, outcome));
+        await keepOutcome(mail, token, outcome);
       }));
       return claimed.length;
     },
   };
+
+  /**
+   * Tries through a restart of PostgreSQL: what stays unrecorded becomes uncertain, and each such
+   * mail asks for a person's time.
+   */
+  async function keepOutcome(
+    mail: ClaimableMail, token: string, outcome: DeliveryOutcome,
+  ): Promise<void> {
+    for (let attempt = 1; ; attempt++) {
+      try {
+        return await database.asActor(system, (trx) => recordOutcome(trx, mail, token, outcome));
+      } catch (error) {
+        if (attempt === attemptsToRecord) throw error;
+        logger.warn({ err: error, mailId: mail.id, kind: outcome.kind }, 'outcome not recorded');
+        await delay(50 * 2 ** attempt);
+      }
+    }
+  }
 
   /** As the recipient, so that row-level security decides once more what may be said. */
   async function compose(
