@@ -49,6 +49,7 @@ async function take(context: BrowserContext, screen: Screen, scheme: string): Pr
   for (const width of widths) {
     await page.setViewportSize({ width, height: width === 390 ? 844 : 900 });
     await page.goto(origin + screen.path, { waitUntil: 'networkidle' });
+    await page.waitForFunction(() => !document.querySelector('tn-state-message .ghost'));
     await page.screenshot({ path: join(directory, `${screen.name}-${width}-${scheme}.png`),
       fullPage: true });
   }

@@ -4,7 +4,7 @@ import { mkdir, readFile, rename, writeFile } from 'node:fs/promises';
 import { join } from 'node:path';
 import type { Circle, PhotoSide } from '#shared/reports/photo';
 import { coinDesigns } from '../../../scripts/demo-pictures/coin-designs';
-import { drawFace, drawSchematic, type DieMark,
+import { drawFace, drawingEdition, drawSchematic, type DieMark,
   type PlacedMark } from '../../../scripts/demo-pictures/draw-piece';
 import { demoMakers, type DemoReport } from './scenario';
 
@@ -18,8 +18,6 @@ export interface DemoPhoto {
 }
 
 const pictureSize = 900;
-/** Raised whenever the drawing changes, so that old pictures are not taken for new ones. */
-const drawingEdition = 1;
 const marksOf: Readonly<Record<string, DieMark | 'none'>> = {
   pits: 'pit', lumps: 'lump', spikes: 'spike', tooled: 'tooled', toning: 'toning', none: 'none',
 };

@@ -35,6 +35,9 @@ interface DemoAccount {
 const accounts: readonly DemoAccount[] = JSON.parse(
   readFileSync(join(import.meta.dirname, '../demo-accounts.json'), 'utf8'));
 
+/** Tells of the edge or of the whole piece: no pin on a face can show them. */
+const notOnAFace = new Set(['edge-seam', 'sharp-rim', 'dull-ring', 'wrong-density']);
+
 const dayMilliseconds = 24 * 3600 * 1000;
 
 /**
@@ -159,12 +162,13 @@ function contentOf(
     })),
     tells: maker.tells.map((tell, position) => ({
       tellId: tell.id, note: tell.note, disclosure: 'public' as const,
-      pins: marks.slice(position * 2, position * 2 + 2).map((mark, number) => ({
-        id: demoId('pin', at, position * 10 + number),
-        photoId: demoId('photo', at, obverse), note: '',
-        place: { side: 'obverse' as const, clockHours: mark.clockHours,
-          radiusFraction: mark.radiusFraction },
-      })),
+      pins: notOnAFace.has(tell.id) ? [] : marks
+        .slice(position * 2, position * 2 + 2).map((mark, number) => ({
+          id: demoId('pin', at, position * 10 + number),
+          photoId: demoId('photo', at, obverse), note: '',
+          place: { side: 'obverse' as const, clockHours: mark.clockHours,
+            radiusFraction: mark.radiusFraction },
+        })),
     })),
     measurements: [...report.measurements],
     surfacing: { channel: report.channel,
