@@ -49,7 +49,7 @@ async function take(context: BrowserContext, screen: Screen, scheme: string): Pr
   for (const width of widths) {
     await page.setViewportSize({ width, height: width === 390 ? 844 : 900 });
     await page.goto(origin + screen.path, { waitUntil: 'networkidle' });
-    await page.waitForFunction(() => !document.querySelector('tn-state-message .ghost'));
+    await page.locator('tn-state-message .ghost').first().waitFor({ state: 'detached' });
     await page.screenshot({ path: join(directory, `${screen.name}-${width}-${scheme}.png`),
       fullPage: true });
   }
