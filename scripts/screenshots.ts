@@ -112,7 +112,7 @@ async function listScreens(): Promise<Screen[]> {
 }
 
 async function firstNumber(path: string): Promise<string> {
-  const answer: { items: { number: string }[] } = await (await fetch(origin + path)).json();
+  const answer = await (await fetch(origin + path)).json() as { items: { number: string }[] };
   const [first] = answer.items;
   if (!first) throw new Error('the demonstration has no public report: run npm start first');
   return first.number;
