@@ -10,7 +10,7 @@ import { lettersOnArc, lettersOnLine } from './stroke-letters';
 export type { DieMark, PlacedMark } from './die-marks';
 
 /** Raised whenever the drawing changes, so that kept pictures are not taken for new ones. */
-export const drawingEdition = 2;
+export const drawingEdition = 3;
 
 export interface FaceDescription {
   /** Slug of a coin type with a design. */
@@ -60,12 +60,17 @@ export async function drawFace(face: FaceDescription): Promise<DrawnFace> {
   };
 }
 
-/** The disc alone on a clear ground, filling the square: WebP, for the front page. */
-export async function drawDisc(face: FaceDescription, quality: number): Promise<Buffer> {
+/**
+ * The disc alone on a clear ground, filling the square: WebP, for the front page.
+ * @param width pixels of the picture; drawn at the face's size, then made smaller
+ */
+export async function drawDisc(
+  face: FaceDescription, width: number, quality: number,
+): Promise<Buffer> {
   const { size } = face;
   const { disc } = await lightFace(face, size / 2 - 1);
   return sharp(disc, { raw: { width: size, height: size, channels: 4 } })
-    .webp({ quality, alphaQuality: 90, effort: 6 }).toBuffer();
+    .resize(width).webp({ quality, alphaQuality: 90, effort: 6 }).toBuffer();
 }
 
 async function lightFace(

@@ -6,8 +6,8 @@ import { drawDisc } from './draw-piece';
 const directory = join(import.meta.dirname, '../../client/public/art');
 await mkdir(directory, { recursive: true });
 const face = { side: 'obverse', wear: 0.05, turnDegrees: 0, lampDegrees: 318,
-  size: 640 } as const;
+  size: 1280 } as const;
 await writeFile(join(directory, 'front-known.webp'), await drawDisc({ ...face,
-  design: 'larkmoor-half-mark', year: 1923, marks: 'none', dieSeed: 1, granular: 0.02 }, 72));
+  design: 'larkmoor-half-mark', year: 1923, marks: 'none', dieSeed: 1, granular: 0.02 }, 640, 76));
 await writeFile(join(directory, 'front-suspect.webp'), await drawDisc({ ...face,
-  design: 'quillhaven-crown', year: 1887, marks: 'pit', dieSeed: 8, granular: 0.5 }, 66));
+  design: 'quillhaven-crown', year: 1887, marks: 'pit', dieSeed: 8, granular: 0.34 }, 640, 70));

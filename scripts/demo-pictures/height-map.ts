@@ -44,10 +44,11 @@ export async function reliefOf(
   ]);
   const heights = raise(device, size, 0.085 * radius, 0.038 * radius, 0.006 * radius);
   add(heights, raise(parts, size, 0.05 * radius, 0.018 * radius, 0.004 * radius));
-  const plain = raise(flat, size, 0.014 * radius, 0.0165 * radius, 0.0022 * radius);
+  // Coverage smoothed is a steep side with a flat top, without the steps of whole pixels.
+  const plain = blur(Float32Array.from(flat), size, Math.max(1, Math.round(0.0036 * radius)));
   for (let at = 0; at < heights.length; at++) {
     const device = heights[at] ?? 0;
-    const letter = plain[at] ?? 0;
+    const letter = Math.sin((plain[at] ?? 0) * Math.PI / 510) * 0.0165 * radius;
     if (letter > device) heights[at] = letter;
   }
   const cut = blur(Float32Array.from(cuts), size, Math.max(1, Math.round(0.0024 * radius)));

@@ -63,16 +63,16 @@ import { Mark } from '../ui/mark';
       border-radius: 50%;
     }
     .one {
-      top: 21.2%;
-      left: 20.7%;
+      top: 20.3%;
+      left: 19.8%;
     }
     .two {
-      top: 53.6%;
-      left: 70.6%;
+      top: 43.6%;
+      left: 69.3%;
     }
     .three {
-      top: 62.3%;
-      left: 29.1%;
+      top: 63%;
+      left: 43.8%;
     }
     tn-mark {
       display: block;
