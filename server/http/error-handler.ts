@@ -2,6 +2,7 @@ import { randomUUID } from 'node:crypto';
 import type { ErrorRequestHandler, RequestHandler } from 'express';
 import type { Logger } from 'pino';
 import type { ApiProblem } from '#shared/api-problem';
+import { isConnectionLost } from '../db/lost-connection';
 import { InvalidInput, NotFound, ProblemError } from '../errors';
 
 /** The last route under /api: what is not declared is not there. */
@@ -52,16 +53,8 @@ function toProblemError(error: unknown): ProblemError | undefined {
   if (code === '22P02' || code === '22021' || code === '22P05') {
     return new InvalidInput([{ field: '', code: 'invalid' }]);
   }
-  if (isConnectionFault(error, code)) {
+  if (isConnectionLost(error)) {
     return new ProblemError(503, 'unavailable', { retryAfterSeconds: 5 });
   }
   return undefined;
-}
-
-/** PostgreSQL is away or going down: the caller may try again. */
-function isConnectionFault(error: Error, code: string | undefined): boolean {
-  return (code !== undefined && (/^(08|57P0)/.test(code)
-      || ['ECONNREFUSED', 'ECONNRESET', 'EPIPE', 'ETIMEDOUT'].includes(code)))
-    || error.name === 'KnexTimeoutError'
-    || /Connection terminated|timeout exceeded when trying to connect/.test(error.message);
 }

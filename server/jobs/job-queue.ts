@@ -3,6 +3,7 @@ import pg from 'pg';
 import PgBoss from 'pg-boss';
 import type { Logger } from 'pino';
 import type { Transaction } from '../db/database';
+import { isConnectionLost } from '../db/lost-connection';
 
 export type JobName = 'match-watches' | 'clean-up';
 
@@ -18,7 +19,6 @@ export interface RunningJobs extends JobQueue {
   stop(): Promise<void>;
 }
 
-const lostConnection = /^(08|57P0|ECONN|EPIPE|ETIMEDOUT)/;
 const attemptsOnLostConnection = 30;
 
 /**
@@ -64,16 +64,9 @@ async function queryPatiently(
     try {
       return await pool.query(text, values);
     } catch (error) {
-      if (!isLostConnection(error) || attempt === attemptsOnLostConnection) throw error;
+      if (!isConnectionLost(error) || attempt === attemptsOnLostConnection) throw error;
       logger.warn({ err: error, attempt }, 'database away, the job queue waits');
       await delay(Math.min(5_000, 100 * 2 ** Math.min(attempt, 6)));
     }
   }
-}
-
-function isLostConnection(error: unknown): boolean {
-  if (!(error instanceof Error)) return false;
-  const { code } = error as { code?: string };
-  return (code !== undefined && lostConnection.test(code))
-    || /Connection terminated|timeout exceeded when trying to connect/.test(error.message);
 }
