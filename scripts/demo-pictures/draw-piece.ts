@@ -10,7 +10,7 @@ import { lettersOnArc, lettersOnLine } from './stroke-letters';
 export type { DieMark, PlacedMark } from './die-marks';
 
 /** Raised whenever the drawing changes, so that kept pictures are not taken for new ones. */
-export const drawingEdition = 3;
+export const drawingEdition = 4;
 
 export interface FaceDescription {
   /** Slug of a coin type with a design. */
@@ -131,17 +131,29 @@ function roughen({ size, heights }: HeightMap, radius: number, face: FaceDescrip
   for (let at = 0; at < heights.length; at++) {
     heights[at] = (heights[at] ?? 0) + (fine[at] ?? 0) * 0.34 + (sand?.[at] ?? 0) * sandHeight;
   }
-  for (let line = 0; line < 34; line++) {
-    let [x, y] = [random() * size, random() * size];
-    let angle = random() * Math.PI * 2;
-    const bend = (random() - 0.5) * 0.004;
-    const depth = 0.1 + 0.24 * random();
-    for (let step = 0; step < size * (0.05 + 0.16 * random()); step++) {
-      x += Math.cos(angle);
-      y += Math.sin(angle);
-      angle += bend;
-      const at = Math.round(y) * size + Math.round(x);
-      if (at >= 0 && at < heights.length) heights[at] = (heights[at] ?? 0) - depth;
+  for (let line = 0; line < 34; line++) scratch(heights, size, random);
+}
+
+/** A hairline: a slightly bent scratch, shared among the pixels that it passes between. */
+function scratch(heights: Float32Array, size: number, random: () => number): void {
+  let [x, y] = [random() * size, random() * size];
+  let angle = random() * Math.PI * 2;
+  const bend = (random() - 0.5) * 0.004;
+  const depth = 0.12 + 0.3 * random();
+  const length = size * (0.04 + 0.13 * random());
+  for (let step = 0; step < length; step++) {
+    x += Math.cos(angle);
+    y += Math.sin(angle);
+    angle += bend;
+    if (x < 1 || y < 1 || x > size - 2 || y > size - 2) return;
+    const at = Math.floor(y) * size + Math.floor(x);
+    const right = x - Math.floor(x);
+    const down = y - Math.floor(y);
+    // Deepest half way, where the hand pressed.
+    const press = depth * Math.sin((Math.PI * step) / length);
+    for (const [pixel, share] of [[at, (1 - right) * (1 - down)], [at + 1, right * (1 - down)],
+      [at + size, (1 - right) * down], [at + size + 1, right * down]] as const) {
+      heights[pixel] = (heights[pixel] ?? 0) - press * share;
     }
   }
 }

@@ -65,12 +65,17 @@ export function lightRelief({ size, heights }: HeightMap, surface: Surface): Buf
       const norm = 1 / Math.sqrt(nx * nx + ny * ny + 1);
       const facing = Math.max(0, (nx * lx + ny * ly + lz) * norm);
       const towards = Math.max(0, (nx * lx + ny * ly + lz + 1) * norm * half);
-      const broad = towards ** 14;
-      const fine = towards ** 90;
+      // Products instead of powers: this runs for every pixel.
+      const second = towards * towards;
+      const eighth = second * second * second * second;
+      const broad = eighth * second * second * second;
+      const thirtySecond = eighth * eighth * eighth * eighth;
+      const fine = thirtySecond * thirtySecond * thirtySecond;
       const turn = Math.atan2(dx, -dy);
-      const lobe = Math.cos(turn - lamp - 0.5);
+      const wedge = Math.cos(turn - lamp - 0.5) ** 2;
       const cartwheel = lustre * Math.min(1, away * 2.2)
-        * (lobe ** 6 * 0.42 - 0.08 + 0.05 * (flow[Math.floor((turn + Math.PI) * 160)] ?? 0));
+        * (wedge * wedge * wedge * 0.42 - 0.08
+          + 0.05 * (flow[Math.floor((turn + Math.PI) * 160)] ?? 0));
       // Hollows keep dirt and see less of the sky.
       const cavity = ((heights[at] ?? 0) - (around[at] ?? 0)) / (radius * 0.0075);
       const open = Math.max(0, Math.min(1, 0.86 + cavity * 0.42));
@@ -96,6 +101,9 @@ export function lightRelief({ size, heights }: HeightMap, surface: Surface): Buf
 
 const white: Colour = [1, 1, 1];
 
+/** Some ten times as fast as `Math.hypot`, which guards against numbers that never occur here. */
+const length = (x: number, y: number): number => Math.sqrt(x * x + y * y);
+
 /** Metal flowed outward under the die: fine spokes, some brighter, some darker. */
 function flowLines({ seed, turnDegrees }: Surface): Float32Array {
   const random = seededRandom(seed * 17 + 5);
@@ -118,7 +126,7 @@ function toningAt(x: number, y: number, turnDegrees: number): Colour {
   const turn = (turnDegrees * Math.PI) / 180;
   const offX = 0.10 * Math.cos(turn) + 0.08 * Math.sin(turn);
   const offY = 0.10 * Math.sin(turn) - 0.08 * Math.cos(turn);
-  const away = Math.hypot(x - offX, y - offY);
+  const away = length(x - offX, y - offY);
   const strength = Math.max(0, Math.min(1, (away - 0.30) / 0.5));
   const phase = away * 12.5 - 3.6;
   return [1 + strength * (0.10 + 0.20 * Math.cos(phase)),
@@ -137,9 +145,11 @@ export function stoneGround(size: number, radius: number, lampDegrees: number): 
     for (let x = 0; x < size; x++) {
       const dx = x + 0.5 - size / 2;
       const dy = y + 0.5 - size / 2;
-      const pool = Math.max(0, 1 - Math.hypot(dx - lx * size * 0.3, dy - ly * size * 0.3)
+      // Under the disc nothing is seen.
+      if (dx * dx + dy * dy < (radius - 2) ** 2) continue;
+      const pool = Math.max(0, 1 - length(dx - lx * size * 0.3, dy - ly * size * 0.3)
         / (size * 0.85));
-      const out = Math.hypot(dx + lx * radius * 0.045, dy + ly * radius * 0.045) / radius - 1;
+      const out = length(dx + lx * radius * 0.045, dy + ly * radius * 0.045) / radius - 1;
       const shade = 1 - 0.72 * Math.exp(-Math.max(0, out) * 13);
       const bright = (0.88 + 0.34 * pool) * shade;
       const grain = (random() - 0.5) * 2.4;
