@@ -10,7 +10,7 @@ import { lettersOnArc, lettersOnLine } from './stroke-letters';
 export type { DieMark, PlacedMark } from './die-marks';
 
 /** Raised whenever the drawing changes, so that kept pictures are not taken for new ones. */
-export const drawingEdition = 4;
+export const drawingEdition = 5;
 
 export interface FaceDescription {
   /** Slug of a coin type with a design. */
@@ -127,7 +127,7 @@ function roughen({ size, heights }: HeightMap, radius: number, face: FaceDescrip
   };
   const fine = noise(1);
   const sand = face.granular > 0.1 ? noise(Math.max(1, Math.round(radius * 0.0045))) : undefined;
-  const sandHeight = face.granular * radius * 0.021;
+  const sandHeight = face.granular * radius * 0.016;
   for (let at = 0; at < heights.length; at++) {
     heights[at] = (heights[at] ?? 0) + (fine[at] ?? 0) * 0.34 + (sand?.[at] ?? 0) * sandHeight;
   }

@@ -10,4 +10,4 @@ const face = { side: 'obverse', wear: 0.05, turnDegrees: 0, lampDegrees: 318,
 await writeFile(join(directory, 'front-known.webp'), await drawDisc({ ...face,
   design: 'larkmoor-half-mark', year: 1923, marks: 'none', dieSeed: 1, granular: 0.02 }, 640, 76));
 await writeFile(join(directory, 'front-suspect.webp'), await drawDisc({ ...face,
-  design: 'quillhaven-crown', year: 1887, marks: 'pit', dieSeed: 8, granular: 0.34 }, 640, 70));
+  design: 'quillhaven-crown', year: 1887, marks: 'pit', dieSeed: 8, granular: 0.42 }, 640, 70));

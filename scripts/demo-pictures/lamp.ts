@@ -39,6 +39,8 @@ export function lightRelief({ size, heights }: HeightMap, surface: Surface): Buf
   const lz = Math.sin(elevation);
   // Half way between the lamp and the eye above.
   const half = 1 / Math.hypot(lx, ly, lz + 1);
+  // A camera opens wider under a low lamp.
+  const exposure = brightnessFacing(0.67) / brightnessFacing(lz);
   const around = blur(heights.slice(), size, Math.max(2, Math.round(radius * 0.014)));
   const flow = flowLines(surface);
   const centre = size / 2;
@@ -79,7 +81,7 @@ export function lightRelief({ size, heights }: HeightMap, surface: Surface): Buf
       // Hollows keep dirt and see less of the sky.
       const cavity = ((heights[at] ?? 0) - (around[at] ?? 0)) / (radius * 0.0075);
       const open = Math.max(0, Math.min(1, 0.86 + cavity * 0.42));
-      const diffuse = (0.10 + 0.80 * facing * facing + 0.22 * facing)
+      const diffuse = exposure * brightnessFacing(facing)
         * (1 + cartwheel) * (0.45 + 0.55 * open);
       const spec = (0.20 * broad + 0.30 * fine * (1 - granular * 0.7))
         * (0.6 + cartwheel * 1.6) * open;
@@ -98,6 +100,9 @@ export function lightRelief({ size, heights }: HeightMap, surface: Surface): Buf
   }
   return pixels;
 }
+
+const brightnessFacing = (facing: number): number =>
+  0.10 + 0.80 * facing * facing + 0.22 * facing;
 
 const white: Colour = [1, 1, 1];
 
