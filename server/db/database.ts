@@ -39,6 +39,8 @@ export function openDatabase(
     connection: { connectionString, application_name: 'touchneedle' },
     pool: { min: 0, max: poolSize },
     acquireConnectionTimeout: 10_000,
+    // Else knex writes of broken connections past the log, to standard output.
+    log: { warn: (message: unknown) => onError(new Error(String(message))) },
   });
   const sessionPool = new pg.Pool({
     connectionString, max: 3, connectionTimeoutMillis: 5_000,
