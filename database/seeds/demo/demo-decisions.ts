@@ -39,6 +39,8 @@ export async function decideAsDemo(
       await claim(nell);
       return;
     case 'published':
+    case 'retracted':
+    case 'merged':
       await decide(report.audience === 'named_clubs' ? nell : first, 'publish');
       if (report.audience === 'public' && report.secondVoice) await decide(hugo, 'agree_public');
       return;

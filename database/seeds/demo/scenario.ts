@@ -65,7 +65,7 @@ export const demoMakers: Readonly<Record<string, DemoMaker>> = {
 };
 
 export type DemoOutcome = 'published' | 'filed' | 'returned' | 'declined' | 'unresolved'
-  | 'withdrawn' | 'in_review';
+  | 'withdrawn' | 'in_review' | 'retracted' | 'merged';
 
 export interface DemoReport {
   readonly type: string;
@@ -154,6 +154,9 @@ export const demoReports: readonly DemoReport[] = [
   report(crown, 1873, 'cast', 226, { ...open, weight: 24.2, channel: 'flea_market',
     ...money(25, 'GBP') }),
   report(penny, 1919, 'tooled', 214, { outcome: 'declined', basis: [], author: tamsin }),
+  report(penny, 1908, 'cast', 208, { ...open, outcome: 'retracted', channel: 'shop',
+    author: tamsin, country: 'NL', region: 'river delta' }),
+  report(crown, 1875, 'cast', 205, { outcome: 'merged', channel: 'inherited_lot' }),
   report(half, 1931, 'toned', 203, { channel: 'shop', country: 'FR', region: 'north' }),
   report(crown, 1883, 'transfer', 190, { die: 3, author: tamsin, audience: 'club',
     country: 'NL' }),

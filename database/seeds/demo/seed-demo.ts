@@ -136,6 +136,8 @@ async function addReport(
     (trx) => filing.file(trx, authorId, demoId('report', at),
       contentOf(report, at, filedAt, pictures)));
   await decideAsDemo(parts, filed.number, report);
+  if (report.outcome === 'retracted') await retract(parts, demoId('report', at));
+  if (report.outcome === 'merged') await merge(parts.owner, demoId('report', at));
   await setBack(parts.owner, demoId('report', at), filedAt);
 }
 
@@ -182,6 +184,42 @@ function contentOf(
     photoLicence: 'bulletins_and_exports' as const,
     authorNamed: false,
   };
+}
+
+/** The desk for taking a report back comes later: its end is written here as the desk will. */
+async function retract({ owner, people }: Parts, reportId: string): Promise<void> {
+  const version = { report_id: reportId, version: 1, row_version_seen: 3, lease_token: 0,
+    reason: 'A member brought a genuine piece with the same pits: they come from its storage.' };
+  const voices = [
+    { kind: 'retract', email: 'nell.ashgrove@larkmoor.example', slug: 'larkmoor' },
+    { kind: 'agree_retract', email: 'hugo.pyke@embervale.example', slug: 'ember-vale' },
+  ];
+  await owner.transaction(async (trx) => {
+    for (const { kind, email, slug } of voices) {
+      const club = await trx('club').where({ slug }).first('id');
+      await trx('decision').insert({ ...version, kind, moderator_id: people.get(email),
+        club_id: club?.id });
+    }
+    await endPublication(trx, reportId, 'retracted');
+    await trx('report').where({ id: reportId }).update({ state: 'retracted' });
+  });
+}
+
+/** One piece, reported twice: the later number leads to the first find of the year. */
+async function merge(owner: Knex, reportId: string): Promise<void> {
+  await owner.transaction(async (trx) => {
+    await endPublication(trx, reportId, 'merged');
+    await trx('report').where({ id: reportId })
+      .update({ state: 'merged', merged_into: demoId('report', 0) });
+  });
+}
+
+async function endPublication(
+  trx: Knex.Transaction, reportId: string, endedAs: string,
+): Promise<void> {
+  await trx('publication').where({ report_id: reportId }).whereRaw('upper_inf(during)').update({
+    during: trx.raw(`tstzrange(lower(during),
+      greatest(now(), lower(during) + interval '1 microsecond'))`), ended_as: endedAs });
 }
 
 /** Moves a report and all that was said of it to the day of the story. */
