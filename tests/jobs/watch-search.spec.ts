@@ -126,5 +126,5 @@ describe('a saved search', () => {
     // Neither side of the comparison is always empty.
     expect(matched).toBeGreaterThan(20);
     expect(empty).toBeGreaterThan(20);
-  });
+  }, 120_000);
 });
