@@ -64,7 +64,7 @@ export function watchRoutes(database: Database, service: WatchService, config: C
     route({
       method: 'post', path: '/unsubscribe/:token', operationId: 'unsubscribeOneClick',
       summary: 'One-click unsubscription of mail readers (RFC 8058)', access: publicRoute,
-      limit: 'credentials', params: unsubscribeParams, body: oneClickBody, withoutCsrf: true,
+      limit: 'read', params: unsubscribeParams, body: oneClickBody, withoutCsrf: true,
       bodyType: 'application/x-www-form-urlencoded',
       before: [express.urlencoded({ extended: false, limit: '1kb' })],
       answers: { 200: null }, refusals: [404],
