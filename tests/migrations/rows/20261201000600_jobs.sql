@@ -1,0 +1,1 @@
+insert into pgboss.job (name, data) values ('match-watches', '{}');
