@@ -40,7 +40,8 @@ export async function listQueue(trx: Transaction, query: QueueQuery): Promise<Qu
           and reviews_report(r.audience, r.club_id, r.id, r.state, mine.clubs)),
      totals as (select count(*) as waiting, min(filed_at) as oldest from waiting)
      select totals.waiting, totals.oldest, page.* from totals left join lateral (
-       select r.id, r.number, r.filed_at, r.current_version, r.audience, r.published_audience,
+       select r.id, r.number, r.filed_at, r.filed_at::text as filed_exactly,
+         r.current_version, r.audience, r.published_audience,
          r.state, v.piece, ct.slug as type_slug, ct.name as type_name, c.slug as club_slug,
          c.name as club_name, array_remove(array[${flags}], null) as flags,
          (select case when l.moderator_id = current_actor() then 'mine' else 'other' end
@@ -76,7 +77,7 @@ export async function listQueue(trx: Transaction, query: QueueQuery): Promise<Qu
   return {
     items: page.map(toItem),
     next: items.length > query.limit && last
-      ? writeCursor(last.filed_at, last.id) : null,
+      ? writeCursor(last.filed_exactly, last.id) : null,
     waiting: rows[0].waiting,
     oldestFiledAt: rows[0].oldest?.toISOString() ?? null,
   };
@@ -109,13 +110,14 @@ function toItem(row: QueueRow): QueueItem {
   };
 }
 
-function writeCursor(filedAt: Date, id: string): string {
-  return Buffer.from(`${filedAt.toISOString()}|${id}`).toString('base64url');
+/** With the microseconds that a Date would drop, else the last row would come twice. */
+function writeCursor(filedExactly: string, id: string): string {
+  return Buffer.from(`${filedExactly}|${id}`).toString('base64url');
 }
 
 function readCursor(cursor: string): [string, string] {
   const [filedAt = '', id = ''] = Buffer.from(cursor, 'base64url').toString().split('|');
-  if (!/^\d{4}-\d\d-\d\dT[\d:.]+Z$/.test(filedAt) || !/^[0-9a-f-]{36}$/.test(id)) {
+  if (!/^\d{4}-\d\d-\d\d [\d:.]+[+-]\d\d(:\d\d)?$/.test(filedAt) || !/^[0-9a-f-]{36}$/.test(id)) {
     throw new InvalidInput([{ field: 'after', code: 'invalid' }]);
   }
   return [filedAt, id];
