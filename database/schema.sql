@@ -1,5 +1,9 @@
 CREATE SCHEMA pgboss;
 
+CREATE EXTENSION IF NOT EXISTS btree_gin WITH SCHEMA public;
+
+COMMENT ON EXTENSION btree_gin IS 'support for indexing common datatypes in GIN';
+
 CREATE EXTENSION IF NOT EXISTS btree_gist WITH SCHEMA public;
 
 COMMENT ON EXTENSION btree_gist IS 'support for indexing common datatypes in GiST';
@@ -103,35 +107,32 @@ CREATE FUNCTION pgboss.delete_queue(queue_name text) RETURNS void
     $$;
 
 CREATE FUNCTION public.actor_clubs() RETURNS uuid[]
-    LANGUAGE plpgsql STABLE SECURITY DEFINER
-    SET search_path TO 'public', 'pg_temp'
+    LANGUAGE plpgsql STABLE
     AS $$
 begin
   if current_actor() is null then return '{}'; end if;
-  return (select coalesce(array_agg(distinct m.club_id order by m.club_id), '{}')
-    from membership m join club c on c.id = m.club_id and c.closed_at is null
-   where m.person_id = current_actor() and m.club_id is not null and m.during @> now());
+  if has_rights_at_hand() then return current_setting('touchneedle.clubs')::uuid[]; end if;
+  return find_clubs_of(current_actor(), null);
 end $$;
 
 CREATE FUNCTION public.actor_clubs_as(wanted_role text) RETURNS uuid[]
-    LANGUAGE plpgsql STABLE SECURITY DEFINER
-    SET search_path TO 'public', 'pg_temp'
+    LANGUAGE plpgsql STABLE
     AS $$
 begin
   if current_actor() is null then return '{}'; end if;
-  return (select coalesce(array_agg(distinct m.club_id order by m.club_id), '{}')
-    from membership m join club c on c.id = m.club_id and c.closed_at is null
-   where m.person_id = current_actor() and m.role = wanted_role and m.during @> now());
+  if wanted_role = 'moderator' and has_rights_at_hand() then
+    return current_setting('touchneedle.clubs_moderated')::uuid[];
+  end if;
+  return find_clubs_of(current_actor(), wanted_role);
 end $$;
 
 CREATE FUNCTION public.actor_is_registrar() RETURNS boolean
-    LANGUAGE plpgsql STABLE SECURITY DEFINER
-    SET search_path TO 'public', 'pg_temp'
+    LANGUAGE plpgsql STABLE
     AS $$
 begin
   if current_actor() is null then return false; end if;
-  return coalesce((select p.is_registrar from person p
-                    where p.id = current_actor() and p.closed_at is null), false);
+  if has_rights_at_hand() then return current_setting('touchneedle.registrar')::boolean; end if;
+  return find_is_registrar(current_actor());
 end $$;
 
 CREATE FUNCTION public.audit_entry_join_chain() RETURNS trigger
@@ -151,6 +152,21 @@ begin
   perform set_config('touchneedle.joining_chain', '', true);
   update audit_chain_head set position = head.position + 1, hash = joined;
   return null;
+end $$;
+
+CREATE FUNCTION public.become_actor(wanted text) RETURNS void
+    LANGUAGE plpgsql
+    AS $$
+begin
+  perform set_config('touchneedle.actor', wanted, true),
+    set_config('touchneedle.rights_of', '', true);
+  if wanted in ('', 'system') then return; end if;
+  perform
+    set_config('touchneedle.clubs', find_clubs_of(wanted::uuid, null)::text, true),
+    set_config('touchneedle.clubs_moderated', find_clubs_of(wanted::uuid, 'moderator')::text,
+      true),
+    set_config('touchneedle.registrar', find_is_registrar(wanted::uuid)::text, true),
+    set_config('touchneedle.rights_of', wanted, true);
 end $$;
 
 CREATE FUNCTION public.current_actor() RETURNS uuid
@@ -175,6 +191,41 @@ begin
   return new;
 end $$;
 
+CREATE FUNCTION public.find_clubs_of(wanted_person uuid, wanted_role text) RETURNS uuid[]
+    LANGUAGE plpgsql STABLE SECURITY DEFINER
+    SET search_path TO 'public', 'pg_temp'
+    AS $$
+begin
+  return (select coalesce(array_agg(distinct m.club_id order by m.club_id), '{}')
+    from membership m join club c on c.id = m.club_id and c.closed_at is null
+   where m.person_id = wanted_person and m.club_id is not null and m.during @> now()
+     and (wanted_role is null or m.role = wanted_role));
+end $$;
+
+CREATE FUNCTION public.find_is_registrar(wanted_person uuid) RETURNS boolean
+    LANGUAGE plpgsql STABLE SECURITY DEFINER
+    SET search_path TO 'public', 'pg_temp'
+    AS $$
+begin
+  return coalesce((select p.is_registrar from person p
+    where p.id = wanted_person and p.closed_at is null), false);
+end $$;
+
+CREATE FUNCTION public.forget_rights() RETURNS trigger
+    LANGUAGE plpgsql
+    AS $$
+begin
+  perform set_config('touchneedle.rights_of', '', true);
+  return null;
+end $$;
+
+CREATE FUNCTION public.has_rights_at_hand() RETURNS boolean
+    LANGUAGE sql STABLE
+    AS $$
+  select current_setting('touchneedle.rights_of', true)
+    = current_setting('touchneedle.actor', true)
+$$;
+
 CREATE FUNCTION public.holds_back_tells(wanted_report uuid, wanted_version integer) RETURNS boolean
     LANGUAGE plpgsql STABLE SECURITY DEFINER
     SET search_path TO 'public', 'pg_temp'
@@ -182,12 +233,14 @@ CREATE FUNCTION public.holds_back_tells(wanted_report uuid, wanted_version integ
 begin
   return exists (select from report_tell rt join tell t on t.id = rt.tell_id
       where rt.report_id = wanted_report and rt.version = wanted_version
+        and (rt.disclosure <> 'public' or t.disclosure <> 'public')
         and not (sees_disclosure(rt.disclosure, rt.report_id)
           and (t.disclosure = 'public'
             or (t.disclosure = 'clubs' and cardinality(actor_clubs()) > 0)
             or cardinality(actor_clubs_as('moderator')) > 0)))
     or exists (select from pin p
       where p.report_id = wanted_report and p.version = wanted_version
+        and p.disclosure <> 'public'
         and not sees_disclosure(p.disclosure, p.report_id));
 end $$;
 
@@ -205,6 +258,19 @@ CREATE FUNCTION public.is_system_actor() RETURNS boolean
     AS $$
   select coalesce(current_setting('touchneedle.actor', true), '') = 'system'
 $$;
+
+CREATE FUNCTION public.photos_of_version(wanted_report uuid, wanted_version integer) RETURNS jsonb
+    LANGUAGE plpgsql STABLE SECURITY DEFINER
+    SET search_path TO 'public', 'pg_temp'
+    AS $$
+begin
+  if not sees_version(wanted_report, wanted_version) then return '[]'; end if;
+  return (select coalesce(jsonb_agg(jsonb_build_object('id', p.id, 'width', p.width,
+      'height', p.height, 'side', rp.side, 'circle', rp.circle,
+      'uprightDegrees', rp.upright_degrees, 'caption', rp.caption) order by rp.position), '[]')
+    from report_photo rp join photo p on p.id = rp.photo_id
+   where rp.report_id = wanted_report and rp.version = wanted_version);
+end $$;
 
 CREATE FUNCTION public.publication_needs_two_voices() RETURNS trigger
     LANGUAGE plpgsql SECURITY DEFINER
@@ -426,42 +492,32 @@ CREATE FUNCTION public.sees_evidence(wanted_report uuid) RETURNS boolean
     LANGUAGE plpgsql STABLE SECURITY DEFINER
     SET search_path TO 'public', 'pg_temp'
     AS $$
-declare r record;
 begin
   if is_system_actor() then return true; end if;
   if current_actor() is null then return false; end if;
-  select author_id, audience, club_id, state into r from report where id = wanted_report;
-  return found and (r.author_id = current_actor()
-    or reviews_report(r.audience, r.club_id, wanted_report, r.state,
-         actor_clubs_as('moderator')));
+  return coalesce((select r.author_id = current_actor()
+      or reviews_report(r.audience, r.club_id, r.id, r.state, actor_clubs_as('moderator'))
+    from report r where r.id = wanted_report), false);
 end $$;
 
 CREATE FUNCTION public.sees_version(wanted_report uuid, wanted_version integer) RETURNS boolean
     LANGUAGE plpgsql STABLE SECURITY DEFINER
     SET search_path TO 'public', 'pg_temp'
     AS $$
-declare r record; clubs uuid[];
+declare clubs uuid[] := actor_clubs(); registrar boolean := actor_is_registrar();
 begin
   if is_system_actor() then return true; end if;
-  select author_id, audience, published_audience, club_id, embargo_until, state into r
-    from report where id = wanted_report;
-  if not found then return false; end if;
-  if r.published_audience is not null then
-    if actor_is_registrar() then
-      if exists (select from publication p where p.report_id = wanted_report
-                   and p.version = wanted_version) then return true; end if;
-    else
-      clubs := actor_clubs();
-      if sees_as_published(r.published_audience, r.club_id, wanted_report, r.embargo_until, clubs)
-         and exists (select from publication p
-           where p.report_id = wanted_report and p.version = wanted_version
-             and sees_as_published(p.audience, r.club_id, wanted_report, r.embargo_until, clubs))
-      then return true; end if;
-    end if;
-  end if;
-  return current_actor() is not null and (r.author_id = current_actor()
-    or reviews_report(r.audience, r.club_id, wanted_report, r.state,
-         actor_clubs_as('moderator')));
+  return coalesce((select
+      (r.published_audience is not null
+        and (registrar or sees_as_published(r.published_audience, r.club_id, r.id,
+          r.embargo_until, clubs))
+        and exists (select from publication p
+          where p.report_id = r.id and p.version = wanted_version
+            and (registrar or sees_as_published(p.audience, r.club_id, r.id, r.embargo_until,
+              clubs))))
+      or (current_actor() is not null and (r.author_id = current_actor()
+        or reviews_report(r.audience, r.club_id, r.id, r.state, actor_clubs_as('moderator'))))
+    from report r where r.id = wanted_report), false);
 end $$;
 
 CREATE FUNCTION public.send_mail_anew(lost uuid) RETURNS void
@@ -480,6 +536,18 @@ begin
   insert into mail_item (mail_id, report_id, publication_id, position, reasons)
   select anew, i.report_id, i.publication_id, i.position, i.reasons
     from mail_item i where i.mail_id = lost and anew is not null;
+end $$;
+
+CREATE FUNCTION public.signed_in_person(wanted uuid) RETURNS TABLE(is_registrar boolean, session_epoch integer, roles text[])
+    LANGUAGE plpgsql STABLE SECURITY DEFINER
+    SET search_path TO 'public', 'pg_temp'
+    AS $$
+begin
+  return query select p.is_registrar, p.session_epoch, array(select distinct m.role
+      from membership m left join club c on c.id = m.club_id
+     where m.person_id = p.id and m.during @> now()
+       and (m.club_id is null or c.closed_at is null))
+    from person p where p.id = wanted and p.closed_at is null;
 end $$;
 
 CREATE FUNCTION public.unused_photos(created_before timestamp with time zone, at_most integer) RETURNS SETOF uuid
@@ -1730,13 +1798,13 @@ CREATE INDEX report_search_order_index ON ONLY public.report_search USING btree 
 
 CREATE INDEX report_search_clubs_published_at_report_id_idx ON public.report_search_clubs USING btree (published_at DESC, report_id DESC);
 
-CREATE INDEX report_search_tells_index ON ONLY public.report_search USING gin (tells);
+CREATE INDEX report_search_filter_index ON ONLY public.report_search USING gin (words, tells, coin_type_slug, metal, kind, channel, country, confidence, (ARRAY[(year / 10)]));
 
-CREATE INDEX report_search_clubs_tells_idx ON public.report_search_clubs USING gin (tells);
+CREATE INDEX report_search_clubs_words_tells_coin_type_slug_metal_kind_c_idx ON public.report_search_clubs USING gin (words, tells, coin_type_slug, metal, kind, channel, country, confidence, (ARRAY[(year / 10)]));
 
-CREATE INDEX report_search_words_index ON ONLY public.report_search USING gin (words);
+CREATE INDEX report_search_year_index ON ONLY public.report_search USING btree (year, coin_type_slug, country, channel, metal, kind, confidence) INCLUDE (tier, report_id, published_audience, club_id, reader_clubs, embargo_until);
 
-CREATE INDEX report_search_clubs_words_idx ON public.report_search_clubs USING gin (words);
+CREATE INDEX report_search_clubs_year_coin_type_slug_country_channel_met_idx ON public.report_search_clubs USING btree (year, coin_type_slug, country, channel, metal, kind, confidence) INCLUDE (tier, report_id, published_audience, club_id, reader_clubs, embargo_until);
 
 CREATE INDEX report_search_public_coin_type_slug_published_at_report_id_idx ON public.report_search_public USING btree (coin_type_slug, published_at DESC, report_id DESC);
 
@@ -1744,9 +1812,9 @@ CREATE INDEX report_search_public_number_idx ON public.report_search_public USIN
 
 CREATE INDEX report_search_public_published_at_report_id_idx ON public.report_search_public USING btree (published_at DESC, report_id DESC);
 
-CREATE INDEX report_search_public_tells_idx ON public.report_search_public USING gin (tells);
+CREATE INDEX report_search_public_words_tells_coin_type_slug_metal_kind__idx ON public.report_search_public USING gin (words, tells, coin_type_slug, metal, kind, channel, country, confidence, (ARRAY[(year / 10)]));
 
-CREATE INDEX report_search_public_words_idx ON public.report_search_public USING gin (words);
+CREATE INDEX report_search_public_year_coin_type_slug_country_channel_me_idx ON public.report_search_public USING btree (year, coin_type_slug, country, channel, metal, kind, confidence) INCLUDE (tier, report_id, published_audience, club_id, reader_clubs, embargo_until);
 
 CREATE INDEX report_second_voice_index ON public.report USING btree (filed_at, id) WHERE ((state = 'published'::text) AND (audience = 'public'::text) AND (published_audience <> 'public'::text));
 
@@ -1778,9 +1846,9 @@ ALTER INDEX public.report_search_pkey ATTACH PARTITION public.report_search_club
 
 ALTER INDEX public.report_search_order_index ATTACH PARTITION public.report_search_clubs_published_at_report_id_idx;
 
-ALTER INDEX public.report_search_tells_index ATTACH PARTITION public.report_search_clubs_tells_idx;
+ALTER INDEX public.report_search_filter_index ATTACH PARTITION public.report_search_clubs_words_tells_coin_type_slug_metal_kind_c_idx;
 
-ALTER INDEX public.report_search_words_index ATTACH PARTITION public.report_search_clubs_words_idx;
+ALTER INDEX public.report_search_year_index ATTACH PARTITION public.report_search_clubs_year_coin_type_slug_country_channel_met_idx;
 
 ALTER INDEX public.report_search_type_index ATTACH PARTITION public.report_search_public_coin_type_slug_published_at_report_id_idx;
 
@@ -1790,9 +1858,9 @@ ALTER INDEX public.report_search_pkey ATTACH PARTITION public.report_search_publ
 
 ALTER INDEX public.report_search_order_index ATTACH PARTITION public.report_search_public_published_at_report_id_idx;
 
-ALTER INDEX public.report_search_tells_index ATTACH PARTITION public.report_search_public_tells_idx;
+ALTER INDEX public.report_search_filter_index ATTACH PARTITION public.report_search_public_words_tells_coin_type_slug_metal_kind__idx;
 
-ALTER INDEX public.report_search_words_index ATTACH PARTITION public.report_search_public_words_idx;
+ALTER INDEX public.report_search_year_index ATTACH PARTITION public.report_search_public_year_coin_type_slug_country_channel_me_idx;
 
 CREATE TRIGGER audit_entry_append_only BEFORE DELETE OR UPDATE ON public.audit_entry FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
 
@@ -1800,9 +1868,15 @@ CREATE CONSTRAINT TRIGGER audit_entry_joins_chain AFTER INSERT ON public.audit_e
 
 CREATE TRIGGER audit_entry_no_truncate BEFORE TRUNCATE ON public.audit_entry FOR EACH STATEMENT EXECUTE FUNCTION public.refuse_change();
 
+CREATE TRIGGER club_forgets_rights AFTER DELETE OR UPDATE ON public.club FOR EACH STATEMENT EXECUTE FUNCTION public.forget_rights();
+
 CREATE TRIGGER coin_type_revision_append_only BEFORE DELETE OR UPDATE ON public.coin_type_revision FOR EACH ROW EXECUTE FUNCTION public.refuse_change();
 
 CREATE TRIGGER decision_without_conflict BEFORE INSERT ON public.decision FOR EACH ROW EXECUTE FUNCTION public.decision_not_on_own_report();
+
+CREATE TRIGGER membership_forgets_rights AFTER INSERT OR DELETE OR UPDATE ON public.membership FOR EACH STATEMENT EXECUTE FUNCTION public.forget_rights();
+
+CREATE TRIGGER person_forgets_rights AFTER DELETE OR UPDATE ON public.person FOR EACH STATEMENT EXECUTE FUNCTION public.forget_rights();
 
 CREATE CONSTRAINT TRIGGER publication_two_voices AFTER INSERT OR UPDATE ON public.publication DEFERRABLE INITIALLY DEFERRED FOR EACH ROW EXECUTE FUNCTION public.publication_needs_two_voices();
 
@@ -2240,6 +2314,12 @@ GRANT ALL ON FUNCTION public.actor_is_registrar() TO touchneedle_app;
 
 GRANT ALL ON FUNCTION public.current_actor() TO touchneedle_app;
 
+REVOKE ALL ON FUNCTION public.find_clubs_of(wanted_person uuid, wanted_role text) FROM PUBLIC;
+GRANT ALL ON FUNCTION public.find_clubs_of(wanted_person uuid, wanted_role text) TO touchneedle_app;
+
+REVOKE ALL ON FUNCTION public.find_is_registrar(wanted_person uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION public.find_is_registrar(wanted_person uuid) TO touchneedle_app;
+
 GRANT ALL ON FUNCTION public.is_system_actor() TO touchneedle_app;
 
 REVOKE ALL ON FUNCTION public.renew_report_search(wanted_report uuid) FROM PUBLIC;
@@ -2253,6 +2333,9 @@ GRANT ALL ON FUNCTION public.reserve_notice_mail(wanted_cause text, reporter uui
 
 REVOKE ALL ON FUNCTION public.send_mail_anew(lost uuid) FROM PUBLIC;
 GRANT ALL ON FUNCTION public.send_mail_anew(lost uuid) TO touchneedle_app;
+
+REVOKE ALL ON FUNCTION public.signed_in_person(wanted uuid) FROM PUBLIC;
+GRANT ALL ON FUNCTION public.signed_in_person(wanted uuid) TO touchneedle_app;
 
 GRANT SELECT,INSERT,DELETE,UPDATE ON TABLE pgboss.archive TO touchneedle_app;
 

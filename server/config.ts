@@ -8,7 +8,7 @@ const schema = z.object({
   HOST: z.string().default('127.0.0.1'),
   BASE_URL: z.url().default('http://localhost:4310'),
   DATABASE_URL: z.string().startsWith('postgres'),
-  DATABASE_POOL_SIZE: z.coerce.number().int().min(2).max(100).default(10),
+  DATABASE_POOL_SIZE: z.coerce.number().int().min(2).max(100).default(4),
   SESSION_SECRET: secret,
   REPORT_NUMBER_KEY: secret,
   MAIL_TOKEN_KEY: secret,

@@ -1,5 +1,6 @@
 import knex, { type Knex } from 'knex';
 import pg from 'pg';
+import type { Role } from '#shared/access/audience';
 
 /** On whose behalf a transaction reads and writes; row-level security goes by it. */
 export type Actor =
@@ -12,12 +13,23 @@ export const system: Actor = { kind: 'system' };
 
 export type Transaction = Knex.Transaction;
 
+export interface SignedInRow {
+  readonly is_registrar: boolean;
+  readonly session_epoch: number;
+  readonly roles: readonly Role[];
+}
+
 export interface Database {
   /**
    * Runs `work` in one transaction as `actor`. Every access goes through here, reads too, and it
    * is never nested: a nested one waits for a second connection and can lock up a small pool.
    */
   asActor<Result>(actor: Actor, work: (trx: Transaction) => Promise<Result>): Promise<Result>;
+  /**
+   * Who a session belongs to, with the roles held at this moment; undefined once the account is
+   * closed. Asked before there is an actor, in one statement of its own.
+   */
+  findSignedIn(personId: string): Promise<SignedInRow | undefined>;
   /** For the session store alone, which knows no actor. */
   readonly sessionPool: pg.Pool;
   close(): Promise<void>;
@@ -43,7 +55,7 @@ export function openDatabase(
     log: { warn: (message: unknown) => onError(new Error(String(message))) },
   });
   const sessionPool = new pg.Pool({
-    connectionString, max: 3, connectionTimeoutMillis: 5_000,
+    connectionString, max: 4, connectionTimeoutMillis: 5_000,
     application_name: 'touchneedle-session',
   });
   sessionPool.on('error', onError);
@@ -53,6 +65,11 @@ export function openDatabase(
       await continueAs(trx, actor);
       return work(trx);
     }),
+    findSignedIn: async (personId) => {
+      const { rows: [row] } = await sessionPool.query<SignedInRow>({ name: 'signed-in-person',
+        text: 'select * from signed_in_person($1)', values: [personId] });
+      return row;
+    },
     close: async () => {
       await pool.destroy();
       await sessionPool.end();
@@ -66,5 +83,5 @@ export function openDatabase(
  */
 export async function continueAs(trx: Transaction, actor: Actor): Promise<void> {
   const setting = actor.kind === 'person' ? actor.id : actor.kind === 'system' ? 'system' : '';
-  await trx.raw(`select set_config('touchneedle.actor', ?, true)`, [setting]);
+  await trx.raw('select become_actor(?)', [setting]);
 }

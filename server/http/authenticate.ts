@@ -19,18 +19,12 @@ export function callerOf(request: Request): SignedIn | undefined {
   return callers.get(request);
 }
 
-/** Reads who asks, with the roles held at this moment, in one statement. */
+/** Reads who asks, with the roles held at this moment. */
 export function authenticate(database: Database): RequestHandler {
   return async (request, _response, next) => {
     const personId = request.session?.personId;
     if (personId) {
-      const row = await database.asActor({ kind: 'person', id: personId }, (trx) => trx
-        .select('person.is_registrar', 'person.session_epoch',
-          trx.raw(`array(select distinct m.role from membership m
-             left join club c on c.id = m.club_id
-            where m.person_id = person.id and m.during @> now()
-              and (m.club_id is null or c.closed_at is null)) as roles`))
-        .from('person').where({ 'person.id': personId }).whereNull('person.closed_at').first());
+      const row = await database.findSignedIn(personId);
       if (row && row.session_epoch === request.session.epoch) {
         callers.set(request, { id: personId, roles: rolesOf(row.roles, row.is_registrar) });
       }

@@ -36,7 +36,19 @@ export function applyFilter(
   }
   if (filter.yearFrom !== undefined) void query.where('s.year', '>=', filter.yearFrom);
   if (filter.yearTo !== undefined) void query.where('s.year', '<=', filter.yearTo);
+  const decades = decadesOf(filter);
+  if (decades) void query.whereRaw('array[s.year / 10] && ?::integer[]', [decades]);
   return query;
+}
+
+/** The decades of a bounded range of years, as the index names them: years over ten, cut off. */
+function decadesOf({ yearFrom, yearTo }: WatchFilter): number[] | undefined {
+  if (yearFrom === undefined || yearTo === undefined) return undefined;
+  const first = Math.trunc(yearFrom / 10);
+  const count = Math.trunc(yearTo / 10) - first + 1;
+  // A range of many decades narrows little, and an index condition of many values costs more.
+  return count <= 20 ? Array.from({ length: Math.max(count, 0) }, (_, at) => first + at)
+    : undefined;
 }
 
 /** Which of the reports hold which of the words for the actor, as `report-id words`. */
@@ -66,23 +78,45 @@ export function hasWords(text: string): boolean {
   return /[\p{L}\p{N}]/u.test(text);
 }
 
+const newestFirst = [{ column: 's.published_at', order: 'desc' },
+  { column: 's.report_id', order: 'desc' }];
+
 function visibleReports(trx: Transaction): Knex.QueryBuilder {
   return trx.from({ s: 'visible_report_search' });
 }
 
-/** A page of cards, the newest publication first, with the place of each for paging by key. */
+export interface PlacedCard {
+  readonly card: ReportCard;
+  /** The place of the card in the list, for paging by key. */
+  readonly cursor: SearchCursor;
+}
+
+/** A page of cards, the newest publication first. */
 export async function listCards(trx: Transaction, filter: WatchFilter, page: {
   readonly after?: SearchCursor | undefined; readonly limit: number;
-}): Promise<{ readonly card: ReportCard; readonly cursor: SearchCursor }[]> {
-  const query = applyFilter(selectCards(trx), filter)
-    .orderBy([{ column: 's.published_at', order: 'desc' },
-      { column: 's.report_id', order: 'desc' }])
-    .limit(page.limit);
+}): Promise<PlacedCard[]> {
+  const wanted = applyFilter(visibleReports(trx).select('s.report_id'), filter)
+    .orderBy(newestFirst).limit(page.limit);
   if (page.after) {
-    void query.whereRaw('(s.published_at, s.report_id) < (?::timestamptz, ?::uuid)',
+    void wanted.whereRaw('(s.published_at, s.report_id) < (?::timestamptz, ?::uuid)',
       [page.after.publishedAt, page.after.reportId]);
   }
-  const rows: (CardRow & { readonly cursor_at: string })[] = await query;
+  // What a card shows is read for the page alone: joined to all the hits it took most of the time.
+  return toPlacedCards(await selectCards(trx).withMaterialized('page', wanted)
+    .join('page', 'page.report_id', 's.report_id').orderBy(newestFirst));
+}
+
+/** The cards of reports that have just been found, the newest publication first. */
+export async function listFoundCards(
+  trx: Transaction, reportIds: readonly string[],
+): Promise<PlacedCard[]> {
+  return toPlacedCards(await selectCards(trx).whereIn('s.report_id', reportIds)
+    .orderBy(newestFirst));
+}
+
+function toPlacedCards(
+  rows: readonly (CardRow & { readonly cursor_at: string })[],
+): PlacedCard[] {
   return rows.map((row) => ({
     card: toCard(row), cursor: { publishedAt: row.cursor_at, reportId: row.report_id },
   }));
@@ -108,15 +142,21 @@ export async function countReports(trx: Transaction, filter: WatchFilter): Promi
 }
 
 interface CountRow {
-  readonly facet: FacetName | 'total';
+  readonly facet: FacetName | 'total' | 'page';
   readonly value: string | null;
   readonly count: number;
 }
 
-/** The total and the counts of every facet among the hits, in one statement. */
-export async function countHits(trx: Transaction, filter: WatchFilter): Promise<SearchTotals> {
-  const hits = applyFilter(visibleReports(trx).select('s.coin_type_slug', 's.metal', 's.kind',
-    's.channel', 's.country', 's.confidence', 's.tells'), filter);
+/**
+ * The total, the counts of every facet among the hits and the first page of them, in one statement
+ * that finds them once.
+ */
+export async function countHits(
+  trx: Transaction, filter: WatchFilter, pageLimit: number,
+): Promise<SearchTotals & { readonly firstPage: readonly string[] }> {
+  const hits = applyFilter(visibleReports(trx).select('s.report_id', 's.published_at',
+    's.coin_type_slug', 's.metal', 's.kind', 's.channel', 's.country', 's.confidence', 's.tells'),
+  filter);
   const { rows }: { rows: CountRow[] } = await trx.raw(
     `with hit as materialized (?)
      select case when grouping(s.coin_type_slug) = 0 then 'coinType'
@@ -129,11 +169,15 @@ export async function countHits(trx: Transaction, filter: WatchFilter): Promise<
        (s.country), (s.confidence), ())
      union all
      select 'tell', t.tell, count(*) from hit s cross join unnest(s.tells) as t (tell)
-      group by t.tell`, [hits]);
+      group by t.tell
+     union all
+     select 'page', p.report_id::text, 1 from (select report_id from hit
+       order by published_at desc, report_id desc limit ?) p`, [hits, pageLimit]);
   const countsOf = (facet: FacetName): FacetCount[] =>
     byFrequency(rows.filter((row) => row.facet === facet));
   return {
     count: rows.find((row) => row.facet === 'total')?.count ?? 0,
+    firstPage: rows.flatMap(({ facet, value }) => facet === 'page' && value ? [value] : []),
     facets: {
       coinType: countsOf('coinType'), metal: countsOf('metal'), kind: countsOf('kind'),
       tell: countsOf('tell'), channel: countsOf('channel'), country: countsOf('country'),

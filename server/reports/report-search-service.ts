@@ -3,7 +3,7 @@ import { parseReportNumber } from '#shared/reports/report-number';
 import type { WatchFilter } from '#shared/watches/watch-filter';
 import type { Transaction } from '../db/database';
 import { InvalidInput } from '../errors';
-import { findCard, listCards, type FacetCounts } from './report-search-queries';
+import { findCard, listCards, listFoundCards, type FacetCounts } from './report-search-queries';
 import { filterOf, readCursor, writeCursor, type SearchQuery } from './report-search-schemas';
 import { mendText } from './search-words-queries';
 import type { KeptTotals } from './search-totals';
@@ -45,10 +45,12 @@ export function createReportSearchService(kept: KeptTotals) {
     if (query.after !== undefined && !after) {
       throw new InvalidInput([{ field: 'after', code: 'invalid' }]);
     }
-    const found = await listCards(trx, filter, { after, limit: query.limit + 1 });
+    const limit = query.limit + 1;
+    const totals = after ? undefined : await kept.get(trx, filter, limit);
+    const found = totals?.firstPage ? await listFoundCards(trx, totals.firstPage)
+      : await listCards(trx, filter, { after, limit });
     const page = found.slice(0, query.limit);
     const last = page.at(-1);
-    const totals = after ? undefined : await kept.get(trx, filter);
     const count = after?.count ?? totals?.count ?? 0;
     return {
       ...nothing,

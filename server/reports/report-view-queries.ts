@@ -34,12 +34,13 @@ select r.number, r.state, r.row_version, r.audience as asked_audience, r.publish
   r.embargo_until, r.filed_at, r.author_named, r.author_id = current_actor() as mine, v.version,
   v.piece,
   v.piece_count, v.condition, v.whereabouts, v.account_html, seen.evidence,
-  reporter_name(r.id) as reporter_name, holds_back_tells(r.id, v.version) as held_back,
+  case when r.author_named or seen.evidence then reporter_name(r.id) end as reporter_name,
+  holds_back_tells(r.id, v.version) as held_back,
   m.id as method_id, m.name as method_name, ct.slug as type_slug, ct.name as type_name,
   ct.issuer as type_issuer, cr.standard -> 'diameter' as type_diameter,
   case when seen.evidence or cardinality(actor_clubs()) > 0 then c.slug end as club_slug,
   c.name as club_name, into_report.number as merged_into,
-  retraction_reason(r.id) as retraction_reason,
+  case when r.state = 'retracted' then retraction_reason(r.id) end as retraction_reason,
   p.confidence, p.basis, lower(p.during) as published_at,
   s.channel, s.surfaced_month, s.country, s.region, s.price_band_low, s.price_band_high,
   s.currency, d.report_id is not null as has_detail, d.surfaced_on, d.town, d.price, e.venue,
@@ -47,11 +48,7 @@ select r.number, r.state, r.row_version, r.audience as asked_audience, r.publish
       'note', x.note) order by array_position(array['piece', 'holder', 'label', 'packaging'],
       x.kind)) from component x
     where x.report_id = r.id and x.version = v.version) as components,
-  (select jsonb_agg(jsonb_build_object('id', x.photo_id, 'width', ph.width,
-      'height', ph.height, 'side', x.side, 'circle', x.circle,
-      'uprightDegrees', x.upright_degrees, 'caption', x.caption) order by x.position)
-    from report_photo x join photo ph on ph.id = x.photo_id
-    where x.report_id = r.id and x.version = v.version) as photos,
+  photos_of_version(r.id, v.version) as photos,
   (select jsonb_agg(jsonb_build_object('position', x.position, 'id', t.id, 'name', t.name,
       'seen', t.seen, 'note', x.note, 'disclosure', x.disclosure) order by x.position)
     from report_tell x join tell t on t.id = x.tell_id
@@ -128,7 +125,7 @@ interface ViewRow {
   readonly surfaced_on: string | null; readonly town: string | null;
   readonly price: number | null; readonly venue: string | null;
   readonly components: readonly Component[] | null;
-  readonly photos: readonly PlacedPhotoView[] | null;
+  readonly photos: readonly PlacedPhotoView[];
   readonly tells: readonly TellRow[] | null; readonly pins: readonly PinRow[] | null;
   readonly measurements: readonly MeasurementView[] | null;
   readonly history: readonly PublicationView[] | null;
@@ -159,7 +156,7 @@ function toView(row: ViewRow, wanted: WantedVersion): ReportView {
     condition: row.condition,
     whereabouts: row.whereabouts,
     method: row.method_id === null ? null : { id: row.method_id, name: row.method_name ?? '' },
-    photos: row.photos ?? [],
+    photos: row.photos,
     tells: (row.tells ?? []).map((tell) => toTell(tell, row.pins ?? [])),
     someTellsHeldBack: row.held_back,
     measurements: row.measurements ?? [],

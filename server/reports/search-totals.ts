@@ -9,12 +9,17 @@ const countsKept = 2_000;
 /** Values shown for one facet, the most frequent ones; one that is selected stays, however rare. */
 const valuesPerFacet = 60;
 
+export interface FoundTotals extends SearchTotals {
+  readonly firstPage: readonly string[] | undefined;
+}
+
 export interface KeptTotals {
   /**
    * The total and the counts of each facet for what the filter finds for the actor. A facet's own
-   * selection does not narrow its own counts.
+   * selection does not narrow its own counts. Where the hits had to be found for it, the first
+   * of them come along, up to `pageLimit`.
    */
-  get(trx: Transaction, filter: WatchFilter): Promise<SearchTotals>;
+  get(trx: Transaction, filter: WatchFilter, pageLimit: number): Promise<FoundTotals>;
 }
 
 interface Kept {
@@ -32,7 +37,8 @@ export function createKeptTotals(now: () => number): KeptTotals {
   const kept = new Map<string, Kept>();
 
   return {
-    async get(trx, filter) {
+    async get(trx, filter, pageLimit) {
+      let firstPage: readonly string[] | undefined;
       const { rows: [{ audience, changed_at: changedAt }] } = await trx.raw(
         'select audience, changed_at from search_audience()');
       const find = (what: string, wanted: WatchFilter, count: () => Promise<SearchTotals>) => {
@@ -47,10 +53,14 @@ export function createKeptTotals(now: () => number): KeptTotals {
         const { facets } = narrows(others)
           ? await find(name, others, async () => ({ count: 0, facets: { ...noCounts,
             [name]: await countFacet(trx, others, name) } }))
-          : await find('hits', {}, () => countHits(trx, {}));
+          : await find('hits', {}, () => countHits(trx, {}, 0));
         return facets[name];
       };
-      const hits = await find('hits', filter, () => countHits(trx, filter));
+      const hits = await find('hits', filter, async () => {
+        const { firstPage: found, ...totals } = await countHits(trx, filter, pageLimit);
+        firstPage = found;
+        return totals;
+      });
       const facets: Record<FacetName, readonly FacetCount[]> = { ...hits.facets };
       // One after the other: a transaction has one connection.
       for (const name of facetNames) {
@@ -59,7 +69,7 @@ export function createKeptTotals(now: () => number): KeptTotals {
         facets[name] = facets[name].filter((each, index) =>
           index < valuesPerFacet || chosen.includes(each.value));
       }
-      return { count: hits.count, facets };
+      return { count: hits.count, facets, firstPage };
     },
   };
 

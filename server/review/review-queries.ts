@@ -1,3 +1,4 @@
+import type { PlacedPhotoView } from '#shared/reports/photo';
 import type { QueueAnswer, QueueItem, ReviewView } from '#shared/review/review';
 import type { Transaction } from '../db/database';
 import { InvalidInput } from '../errors';
@@ -15,13 +16,18 @@ const conditionOfFlag: Readonly<Record<string, string>> = {
   oldest: `r.filed_at < now() - interval '7 days'`,
 };
 
+const joinOfVersion = `join report_version v on v.report_id = r.id and v.version = r.current_version
+       left join coin_type ct on ct.id = v.coin_type_id`;
+
 /**
  * What waits for a decision of the actor's: filed reports, and published ones that want a second
- * voice for the public; the oldest first. One statement, whatever the number of rows.
+ * voice for the public; the oldest first. One statement, whatever the number of rows; all that
+ * costs a look at who may see it is asked for the rows of the page alone.
  */
 export async function listQueue(trx: Transaction, query: QueueQuery): Promise<QueueAnswer> {
   const conditions: string[] = [];
   const values: string[] = [];
+  const asksOfVersion = query.coinType || ['lot', 'many_pieces'].includes(query.flag ?? '');
   if (query.flag) conditions.push(conditionOfFlag[query.flag] ?? 'true');
   if (query.club) { conditions.push('c.slug = ?'); values.push(query.club); }
   if (query.coinType) { conditions.push('ct.slug = ?'); values.push(query.coinType); }
@@ -30,7 +36,11 @@ export async function listQueue(trx: Transaction, query: QueueQuery): Promise<Qu
     values.push(...readCursor(query.after));
   }
   const flags = Object.entries(conditionOfFlag)
-    .map(([flag, condition]) => `case when ${condition} then '${flag}' end`).join(', ');
+    .map(([flag, condition]) => `case when ${flag === 'no_photo' ? `shown.photos = '[]'`
+      : condition} then '${flag}' end`).join(', ');
+  // By name, so that the connection keeps its plan: planning takes longer than running it.
+  const name = ['review-queue', query.flag ?? 'any', query.club && 'club',
+    query.coinType && 'type', query.after && 'after'].filter(Boolean).join('-');
   const { rows } = await trx.raw(
     `with mine as materialized (select actor_clubs_as('moderator') as clubs),
      waiting as (
@@ -38,7 +48,13 @@ export async function listQueue(trx: Transaction, query: QueueQuery): Promise<Qu
         where (r.state = 'filed' or (r.state = 'published' and r.audience = 'public'
                  and r.published_audience <> 'public'))
           and reviews_report(r.audience, r.club_id, r.id, r.state, mine.clubs)),
-     totals as (select count(*) as waiting, min(filed_at) as oldest from waiting)
+     totals as (select count(*) as waiting, min(filed_at) as oldest from waiting),
+     paged as materialized (
+       select r.* from waiting r
+       ${asksOfVersion ? joinOfVersion : ''}
+       join club c on c.id = r.club_id
+       where ${conditions.length ? conditions.join(' and ') : 'true'}
+       order by r.filed_at, r.id limit ?)
      select totals.waiting, totals.oldest, page.* from totals left join lateral (
        select r.id, r.number, r.filed_at, r.filed_at::text as filed_exactly,
          r.current_version, r.audience, r.published_audience,
@@ -57,20 +73,14 @@ export async function listQueue(trx: Transaction, query: QueueQuery): Promise<Qu
          array(select m from mine, unnest(mine.clubs) as m
            where reviews_report(r.audience, r.club_id, r.id, r.state, array[m]))
            as "clubsOfModerator",
-         (select coalesce(jsonb_agg(jsonb_build_object('id', p.id, 'width', p.width,
-             'height', p.height, 'side', rp.side, 'circle', rp.circle,
-             'uprightDegrees', rp.upright_degrees) order by rp.position), '[]')
-            from report_photo rp join photo p on p.id = rp.photo_id
-           where rp.report_id = r.id and rp.version = r.current_version
-             and rp.side in ('obverse', 'reverse')) as photos
-       from waiting r
-       join report_version v on v.report_id = r.id and v.version = r.current_version
-       join club c on c.id = r.club_id
-       left join coin_type ct on ct.id = v.coin_type_id
-       where ${conditions.length ? conditions.join(' and ') : 'true'}
-       order by r.filed_at, r.id limit ?) page on true
+         shown.photos
+       from paged r
+       cross join lateral (select photos_of_version(r.id, r.current_version) as photos
+         offset 0) shown
+       ${joinOfVersion}
+       join club c on c.id = r.club_id) page on true
      order by page.filed_at, page.id`,
-    [...values, query.limit + 1]);
+    [...values, query.limit + 1]).options({ name });
   const items = rows.filter((row: { id: string | null }) => row.id !== null);
   const page = items.slice(0, query.limit);
   const last = page.at(-1);
@@ -91,7 +101,7 @@ interface QueueRow {
   readonly state: string; readonly flags: QueueItem['flags']; readonly lease: QueueItem['lease'];
   readonly isAuthor: boolean; readonly hasConflict: boolean; readonly hasSpoken: boolean;
   readonly clubsWithVoice: readonly string[]; readonly clubsOfModerator: readonly string[];
-  readonly photos: QueueItem['photos'];
+  readonly photos: readonly PlacedPhotoView[];
 }
 
 function toItem(row: QueueRow): QueueItem {
@@ -106,7 +116,8 @@ function toItem(row: QueueRow): QueueItem {
     flags: row.flags,
     lease: row.lease,
     barred: whyBarred(stageOf(row), row),
-    photos: row.photos.slice(0, 2),
+    photos: row.photos.filter(({ side }) => side === 'obverse' || side === 'reverse')
+      .slice(0, 2).map(({ caption: _caption, ...photo }) => photo),
   };
 }
 
